@@ -1,0 +1,3 @@
+/** @module */
+export * from "./expr/tree.ts";
+export * from "./expr/parse.ts";
