@@ -116,7 +116,7 @@ export function div(a: Expr, b: Expr): Expr {
 export function neg(a: Expr): Expr {
   if (a.kind === "num") return num(-a.p, a.q);
   if (a.kind === "neg") return a.a;
-  if (a.kind === "sub") return { kind: "sub", a: a.b, b: a.a };
+  if (a.kind === "sub") return sub(a.b, a.a);
   return { kind: "neg", a };
 }
 

@@ -1,0 +1,44 @@
+/**
+ * Decides whether an expression vanishes identically. The numeric witness (20 points, 64 digits) says
+ * zero or not; an algebraic route that reaches zero as well makes it a proof.
+ *
+ * @module
+ */
+import { type AlgebraOptions, proposal } from "./algebra.ts";
+import { type Expr, isNum, num } from "./tree.ts";
+import { compare, type Witness } from "./verify.ts";
+
+/** A decision about `e = 0`. */
+export interface ZeroDecision {
+  /**
+   * `proved`: algebra reached zero and the witness agrees. `holds-numerically`: the witness alone.
+   * `nonzero`: a point where it does not vanish. `undecided`: too few points inside the domain.
+   */
+  readonly verdict: "proved" | "holds-numerically" | "nonzero" | "undecided";
+  /** The algorithm that reached zero, empty if none did. */
+  readonly algorithm: string;
+  readonly witness: Witness;
+}
+
+/**
+ * Decides whether `e` is zero for all values of its names.
+ *
+ * @param e An expression.
+ * @param options Points (20 by default), digits, seed, ranges.
+ * @returns The decision; a non-zero value at one point is final, whatever algebra would propose.
+ * @example A square
+ * ```ts
+ * import { decideZero, parse } from "@backstamp/backstamp";
+ * const { verdict } = await decideZero(parse("(x+y)^2 - x^2 - 2*x*y - y^2"));
+ * if (verdict !== "proved") throw new Error(verdict);
+ * ```
+ */
+export async function decideZero(e: Expr, options: AlgebraOptions = {}): Promise<ZeroDecision> {
+  const witness = await compare(e, num(0), { count: 20, ...options });
+  if (witness.outcome === "differ") return { verdict: "nonzero", algorithm: "", witness };
+  const exact = isNum(e, 0);
+  const expanded = exact ? e : await proposal("expand", e, undefined, options);
+  const algorithm = exact ? "exact constants" : expanded && isNum(expanded, 0) ? "expansion" : "";
+  if (witness.outcome === "no-points") return { verdict: "undecided", algorithm, witness };
+  return { verdict: algorithm ? "proved" : "holds-numerically", algorithm, witness };
+}
