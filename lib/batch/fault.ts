@@ -1,0 +1,45 @@
+/**
+ * Faults of an input: where each is and what would be right there. All faults are reported at once.
+ *
+ * @module
+ */
+
+/** One fault of a parameter table. */
+export interface Fault {
+  /** Line of the file, from 1; the header is line 1 unless blank lines precede it. */
+  readonly line: number;
+  /** Column by name, absent where the fault is of the whole line. */
+  readonly column?: string;
+  /** What must hold, and what was found. */
+  readonly text: string;
+}
+
+/**
+ * A fault as one line of text.
+ *
+ * @param fault The fault.
+ * @returns `line L, column C: what must hold: current value is "..."`.
+ */
+export function describeFault({ line, column, text }: Fault): string {
+  return `line ${line}${column === undefined ? "" : `, column ${column}`}: ${text}`;
+}
+
+/** What was found, quoted and cut to a readable length. */
+export function quoted(text: string): string {
+  return JSON.stringify(text.length > 40 ? `${text.slice(0, 37)}...` : text);
+}
+
+/** A parameter table that cannot be run; nothing was. */
+export class TableError extends Error {
+  /** Every fault, by line. */
+  readonly faults: readonly Fault[];
+
+  /** @param faults At least one fault. */
+  constructor(faults: readonly Fault[]) {
+    const sorted = [...faults].sort((x, y) => x.line - y.line);
+    const count = `${sorted.length} fault${sorted.length === 1 ? "" : "s"}`;
+    super(`Cannot run the table as it has ${count}:\n${sorted.map(describeFault).join("\n")}`);
+    this.name = "TableError";
+    this.faults = sorted;
+  }
+}

@@ -1,0 +1,250 @@
+/**
+ * One record of a parameter table to one row input, or to everything that is wrong with it.
+ *
+ * @module
+ */
+import {
+  MODEL_NAMES,
+  type ModelName,
+  type RowInput,
+  STATE_NAMES,
+  type StateName,
+} from "../model/input.ts";
+import {
+  ALWAYS,
+  BATH_STATES,
+  DEFAULTS,
+  EXCLUSIVE,
+  LINEAR_DILATON,
+  PARAMETER_COLUMNS,
+  type ParameterColumn,
+} from "./columns.ts";
+import { type Fault, quoted } from "./fault.ts";
+import { nearest } from "./nearest.ts";
+import { readNumber } from "./number.ts";
+
+/** A valid row: its case, what the solver gets, and the bath as it was typed. */
+export interface TableRow {
+  /** Name of the case. */
+  readonly case: string;
+  /** Line of the file the row begins on. */
+  readonly line: number;
+  /** What the solver gets. */
+  readonly input: RowInput;
+  /** The bath ratio, if the table gave it and not its difference from one. */
+  readonly bathRatio?: number;
+}
+
+/** Cells of one record by column name. */
+export interface Cells {
+  /** Line of the file. */
+  readonly line: number;
+  /** Text of a cell; empty where the column is absent or the cell is. */
+  readonly text: (column: string) => string;
+  /** Whether the header has the column. */
+  readonly has: (column: string) => boolean;
+}
+
+type Report = (column: string, text: string) => void;
+
+const CASE = /^[A-Za-z0-9][A-Za-z0-9._-]{0,63}$/;
+
+function readCase(text: string, report: Report): string {
+  if (text === "") report("case", "must be given: it names the row and its profile");
+  else if (!CASE.test(text)) {
+    report(
+      "case",
+      "must be at most 64 ASCII letters, digits, dots, underscores or hyphens and start with a " +
+        `letter or digit: current value is ${quoted(text)}`,
+    );
+  }
+  return text;
+}
+
+function readName<T extends string>(
+  column: string,
+  text: string,
+  names: readonly T[],
+  report: Report,
+): T | undefined {
+  const found = names.find((n) => n === text);
+  if (found !== undefined) return found;
+  const must = `must be one of ${names.join(", ")}`;
+  if (text === "") report(column, `${must}: current value is empty`);
+  else {
+    report(
+      column,
+      `${must} (nearest: ${nearest(text, names)}): current value is ${quoted(text)}`,
+    );
+  }
+  return undefined;
+}
+
+function list(names: readonly string[]): string {
+  return names.length < 2 ? names.join("") : `${names.slice(0, -1).join(", ")} or ${names.at(-1)}`;
+}
+
+function lacks(
+  column: ParameterColumn,
+  model: ModelName | undefined,
+  state: StateName | undefined,
+): string | undefined {
+  if (model !== undefined && !column.models.includes(model)) {
+    return `must be empty as model ${model} has no ${column.name}, only ${list(column.models)}`;
+  }
+  if (state !== undefined && !column.states.includes(state)) {
+    return `must be empty as state ${state} has no ${column.name}, only ${list(column.states)}`;
+  }
+  return undefined;
+}
+
+function readNumbers(
+  cells: Cells,
+  model: ModelName | undefined,
+  state: StateName | undefined,
+  report: Report,
+): Map<string, number> {
+  const values = new Map<string, number>();
+  for (const column of PARAMETER_COLUMNS) {
+    const text = cells.text(column.name);
+    if (text === "") continue;
+    const missing = lacks(column, model, state);
+    if (missing) {
+      report(column.name, `${missing}: current value is ${quoted(text)}`);
+      continue;
+    }
+    const value = readNumber(text);
+    if (typeof value !== "number") {
+      report(column.name, `${value.must}: current value is ${quoted(text)}`);
+    } else if (!column.holds(value)) {
+      report(column.name, `must be ${column.range}: current value is ${quoted(text)}`);
+    } else values.set(column.name, value);
+  }
+  return values;
+}
+
+function checkGroups(
+  cells: Cells,
+  model: ModelName,
+  state: StateName,
+  report: Report,
+): void {
+  const column = (name: string) => PARAMETER_COLUMNS.find((c) => c.name === name)!;
+  const possible = (name: string) => lacks(column(name), model, state) === undefined;
+  for (const group of EXCLUSIVE) {
+    const names = group.filter(possible);
+    if (names.length === 0) continue;
+    const given = names.filter((n) => cells.text(n) !== "");
+    if (given.length === 1) continue;
+    const must = names.length === 1
+      ? "must be given"
+      : `exactly one of ${names.join(", ")} must be given`;
+    report(
+      given[1] ?? names[0]!,
+      `${must} for model ${model} with state ${state}: current count is ${given.length}`,
+    );
+  }
+  for (const name of ALWAYS) {
+    if (!possible(name) || cells.text(name) !== "") continue;
+    report(name, `must be given for model ${model} with state ${state}: current value is empty`);
+  }
+}
+
+/** A cavity wall must enclose the hole (r > 2M with the Misner-Sharp mass; r > r_h). */
+function checkCavity(values: ReadonlyMap<string, number>, cells: Cells, report: Report): void {
+  const mass = values.get("mass"), wall = values.get("wall_radius");
+  const horizon = values.get("horizon_dilaton");
+  if (mass !== undefined && mass <= 0) {
+    const text = quoted(cells.text("mass"));
+    report("mass", `must be > 0 for model swave with a bath: current value is ${text}`);
+  }
+  if (horizon !== undefined && horizon <= 0) {
+    const text = quoted(cells.text("horizon_dilaton"));
+    report("horizon_dilaton", `must be > 0, a radius, for model swave: current value is ${text}`);
+  }
+  const text = quoted(cells.text("wall_radius"));
+  if (wall !== undefined && mass !== undefined && wall <= 2 * mass) {
+    report(
+      "wall_radius",
+      `must be > 2 * mass = ${2 * mass}, outside the hole: current value is ${text}`,
+    );
+  }
+  if (wall !== undefined && horizon !== undefined && wall <= horizon) {
+    report(
+      "wall_radius",
+      `must be > horizon_dilaton = ${horizon}, outside the hole: current value is ${text}`,
+    );
+  }
+}
+
+function optional<K extends string>(key: K, value: number | undefined): { [P in K]?: number } {
+  return (value === undefined ? {} : { [key]: value }) as { [P in K]?: number };
+}
+
+function rowInput(
+  model: ModelName,
+  state: StateName,
+  values: ReadonlyMap<string, number>,
+): RowInput {
+  const bathRatio = values.get("bath_ratio");
+  return {
+    model,
+    state,
+    kappa: values.get("kappa") ?? values.get("n_scalars")! / 12,
+    ...optional(
+      "lambda",
+      LINEAR_DILATON.includes(model) ? values.get("lambda") ?? DEFAULTS.lambda : undefined,
+    ),
+    ...optional("mass", values.get("mass")),
+    ...optional("massAboveCritical", values.get("mass_above_critical")),
+    ...optional("horizonDilaton", values.get("horizon_dilaton")),
+    ...optional(
+      "bathRatioMinusOne",
+      bathRatio === undefined ? values.get("bath_ratio_minus_one") : bathRatio - 1,
+    ),
+    ...optional("a", values.get("a")),
+    ...optional("wallRadius", values.get("wall_radius")),
+    tolerance: values.get("tolerance") ?? DEFAULTS.tolerance,
+  };
+}
+
+/**
+ * Reads one record.
+ *
+ * @param cells The record's cells.
+ * @returns The row if it is without fault, the case as typed, and the faults.
+ */
+export function readRow(cells: Cells): {
+  readonly row?: TableRow;
+  readonly case: string;
+  readonly faults: readonly Fault[];
+} {
+  const faults: Fault[] = [];
+  const report: Report = (column, text) => faults.push({ line: cells.line, column, text });
+  const name = cells.has("case") ? readCase(cells.text("case"), report) : "";
+  const model = cells.has("model")
+    ? readName("model", cells.text("model"), MODEL_NAMES, report)
+    : undefined;
+  const state = cells.has("state")
+    ? readName("state", cells.text("state"), STATE_NAMES, report)
+    : undefined;
+  const values = readNumbers(cells, model, state, report);
+  if (values.get("n_scalars")! / 12 === 0) {
+    const text = quoted(cells.text("n_scalars"));
+    report("n_scalars", `must be so large that kappa = N/12 is not 0: current value is ${text}`);
+  }
+  if (model !== undefined && state !== undefined) checkGroups(cells, model, state, report);
+  if (model === "swave" && state !== undefined && BATH_STATES.includes(state)) {
+    checkCavity(values, cells, report);
+  }
+  if (faults.length > 0 || model === undefined || state === undefined) {
+    return { case: name, faults };
+  }
+  const row = {
+    case: name,
+    line: cells.line,
+    input: rowInput(model, state, values),
+    ...optional("bathRatio", values.get("bath_ratio")),
+  };
+  return { row, case: name, faults };
+}
