@@ -128,7 +128,10 @@ export function throatRoot(delta: Big): Big {
 /** Positive root v of e^v - 1 - v = delta. */
 export function nakedRoot(delta: Big): Big {
   const start = delta.lt(1) ? delta.mul(2).sqrt() : delta.add(2).ln().add(1);
-  return newton(start, (v) => expMinusLinear(v).sub(delta).div(v.exp().sub(1)));
+  return newton(start, (v) => {
+    const rest = expMinusLinear(v);
+    return rest.sub(delta).div(rest.add(v)); // e^v - 1 would vanish for v below the working precision
+  });
 }
 
 /** Root x of e^x + x = l. */
@@ -186,7 +189,7 @@ export function familyValues(row: FamilyRow): FamilyValues | undefined {
   if (computed && d.abs().lt(mc.abs().add(ec).add(kappa).mul("1e-80"))) d = ZERO;
   if (row.state === "hartle-hawking" && d.lt(0)) return undefined;
   const base = {
-    mass: m.mul(lambda),
+    mass: row.mass === undefined ? m.mul(lambda) : big(row.mass),
     massAboveCritical: d,
     eps,
     temperatureBath: lambda.mul(eps.add(1)).div(PI.mul(2)),
