@@ -14,18 +14,21 @@ export const CORE_ENTRIES: readonly string[] = ["observe/row.ts", "model/compile
 /** What is left out, relative to lib. */
 const CATALOGUE = "model/catalogue/";
 
-const IMPORT =
-  /(?:^|[;}\s])(?:import|export)\s*(?:type\s)?(?:[\w$*\s{},]*?\sfrom\s*|)["']([^"'\n]+)["']|\bimport\(\s*["']([^"'\n]+)["']/g;
+const STATEMENT =
+  /(?:^|[;}\s])(?:import|export)\s*(?:type\s)?(?:[\w$*\s{},]*?\sfrom\s*|)["']([^"'\n]+)["']/;
+const DYNAMIC = /\bimport\(\s*["']([^"'\n]+)["']/;
+const WORKER = /\bnew URL\(\s*["'](\.[^"'\n]+\.ts)["']\s*,\s*import\.meta\.url/;
+const IMPORT = new RegExp([STATEMENT, DYNAMIC, WORKER].map((r) => r.source).join("|"), "g");
 
 /**
- * Specifiers a module imports, exports from, or loads dynamically by a literal.
+ * Specifiers a module imports, exports from, or names by a literal for a dynamic import or a worker.
  *
  * @param source Text of a TypeScript module.
  * @returns Specifiers in order of appearance, without those in comments.
  */
 export function importsOf(source: string): readonly string[] {
   const code = source.replace(/\/\*[\s\S]*?\*\//g, "").replace(/^\s*\/\/.*$/gm, "");
-  return [...code.matchAll(IMPORT)].map((m) => (m[1] ?? m[2])!);
+  return [...code.matchAll(IMPORT)].map((m) => (m[1] ?? m[2] ?? m[3])!);
 }
 
 /** Files and packages that a set of modules consists of. */

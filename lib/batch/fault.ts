@@ -29,16 +29,19 @@ export function quoted(text: string): string {
   return JSON.stringify(text.length > 40 ? `${text.slice(0, 37)}...` : text);
 }
 
-/** A parameter table that cannot be run; nothing was. */
+/** A table or list that cannot be used; nothing was run. */
 export class TableError extends Error {
   /** Every fault, by line. */
   readonly faults: readonly Fault[];
 
-  /** @param faults At least one fault. */
-  constructor(faults: readonly Fault[]) {
+  /**
+   * @param faults At least one fault.
+   * @param what What has the faults.
+   */
+  constructor(faults: readonly Fault[], what: string = "the table") {
     const sorted = [...faults].sort((x, y) => x.line - y.line);
     const count = `${sorted.length} fault${sorted.length === 1 ? "" : "s"}`;
-    super(`Cannot run the table as it has ${count}:\n${sorted.map(describeFault).join("\n")}`);
+    super(`Cannot use ${what} as it has ${count}:\n${sorted.map(describeFault).join("\n")}`);
     this.name = "TableError";
     this.faults = sorted;
   }

@@ -1,0 +1,69 @@
+/**
+ * Runs a command's work in a child process that may read and write only the paths of that command. The
+ * launching process has no other permission than to start it.
+ *
+ * @module
+ */
+import { resolve } from "node:path";
+import { fileURLToPath } from "node:url";
+
+/** Folder of the program. */
+const ROOT = fileURLToPath(new URL("../../", import.meta.url));
+
+/** What the child may do besides reading the program. */
+export interface Grant {
+  /** Files and folders it may read. */
+  readonly read: readonly string[];
+  /** Files and folders it may write. */
+  readonly write: readonly string[];
+  /** Facts about the machine it may ask for. */
+  readonly sys?: readonly string[];
+}
+
+/**
+ * Makes a path of the command line absolute: relative to where the command was typed.
+ *
+ * @param path What was typed.
+ * @returns Absolute path.
+ */
+export function absolutePath(path: string): string {
+  return resolve(Deno.env.get("INIT_CWD") ?? ROOT, path);
+}
+
+/** A path of the program's own folder. */
+export function programPath(path: string): string {
+  return resolve(ROOT, path);
+}
+
+function list(paths: readonly string[]): string {
+  return paths.map((path) => path.replaceAll(",", ",,")).join(","); // a comma separates paths
+}
+
+/**
+ * Runs a module of this folder to its end. Signals that stop a command are passed on.
+ *
+ * @param module File name.
+ * @param grant What it may do.
+ * @param request What it is asked, plain data.
+ * @returns Its exit status; 3 if it was killed.
+ */
+export async function launch(module: string, grant: Grant, request: unknown): Promise<number> {
+  const flags = ["--no-prompt", `--allow-read=${list([ROOT, ...grant.read])}`];
+  if (grant.write.length > 0) flags.push(`--allow-write=${list(grant.write)}`);
+  if (grant.sys) flags.push(`--allow-sys=${grant.sys.join(",")}`);
+  const child = new Deno.Command("deno", {
+    args: ["run", ...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)],
+    stdin: "null",
+    stdout: "inherit",
+    stderr: "inherit",
+  }).spawn();
+  for (const signal of ["SIGINT", "SIGTERM"] as const) {
+    Deno.addSignalListener(signal, () => {
+      try {
+        child.kill(signal);
+      } catch { /* it has ended already */ }
+    });
+  }
+  const { code, signal } = await child.status;
+  return signal === null ? code : 3;
+}

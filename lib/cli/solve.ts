@@ -1,0 +1,77 @@
+/**
+ * The work of `deno task run`, in a process that may read the program and the table and write the output
+ * folder, and nothing else.
+ *
+ * @module
+ */
+import { FILES, hasFigures } from "../batch/folder.ts";
+import { type RunOutcome, runTable } from "../batch/run.ts";
+import { summarize, summaryLines } from "../batch/summary.ts";
+import { progressDisplay } from "./progress.ts";
+import type { RunRequest } from "./run_options.ts";
+import { UsageError } from "./options.ts";
+import { closing, STATUS } from "./status.ts";
+
+async function read(path: string, what: string): Promise<Uint8Array> {
+  try {
+    return await Deno.readFile(path);
+  } catch (error) {
+    throw new UsageError([`Cannot read ${what} ${path}: ${(error as Error).message}`]);
+  }
+}
+
+function interruption(): AbortSignal {
+  const controller = new AbortController();
+  for (const signal of ["SIGINT", "SIGTERM"] as const) {
+    Deno.addSignalListener(signal, () => controller.abort());
+  }
+  return controller.signal;
+}
+
+async function profilesOf(
+  { profiles }: RunRequest,
+): Promise<{ profiles?: "all" | "none" | { lines: string } }> {
+  if (profiles === undefined) return {};
+  if (typeof profiles === "string") return { profiles };
+  const bytes = await read(profiles.file, "the list of profiles");
+  return { profiles: { lines: new TextDecoder().decode(bytes) } };
+}
+
+async function figures(folder: string, { status }: RunOutcome): Promise<void> {
+  if (status === "interrupted" || (status === "nothing-to-do" && hasFigures(folder))) return;
+  const { writeFigures } = await import("../show/figures.ts");
+  const written = await writeFigures(folder);
+  console.log(`Figures: ${written.length} in ${folder}/${FILES.figures}`);
+}
+
+function statusOf({ status, rows }: RunOutcome): number {
+  if (status === "interrupted") return STATUS.interrupted;
+  return rows.some((cells) => cells["outcome"] === "failed") ? STATUS.failed : STATUS.done;
+}
+
+async function main(request: RunRequest): Promise<number> {
+  const { table, out, workers, replace, command } = request;
+  const bytes = await read(table, "the table");
+  const outcome = await runTable({
+    table: bytes,
+    folder: out,
+    workers,
+    replace,
+    command,
+    signal: interruption(),
+    onProgress: progressDisplay(),
+    ...await profilesOf(request),
+  });
+  if (outcome.status === "nothing-to-do") console.log(`Nothing to do: ${out} holds this run whole`);
+  for (const line of summaryLines(summarize(outcome.rows))) console.log(line);
+  for (const row of outcome.unfinished) console.error(`Not finished: ${row.case}: ${row.error}`);
+  if (outcome.status === "interrupted") {
+    const missing = outcome.total - outcome.rows.length;
+    console.error(`Interrupted: ${missing} of ${outcome.total} rows are missing; run again`);
+  }
+  console.log(`Results: ${out}/${FILES.results}`);
+  await figures(out, outcome);
+  return statusOf(outcome);
+}
+
+if (import.meta.main) Deno.exit(await closing(() => main(JSON.parse(Deno.args[0]!))));
