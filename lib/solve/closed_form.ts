@@ -89,6 +89,7 @@ export interface ClosedFormResult {
  *
  * @param input case; lengths in units of 1/lambda's, hbar = c = k_B = 1
  * @returns kind, numbers with bounds, and m - m_c; curvature is R of the two-dimensional metric
+ * @throws RangeError if a parameter is out of range, or not exactly one of the three masses is given
  * @example RST in the Boulware state has a throat instead of a horizon
  * ```ts
  * import { closedForm } from "@backstamp/backstamp";
@@ -103,6 +104,7 @@ export interface ClosedFormResult {
  */
 export function closedForm(input: ClosedFormInput): ClosedFormResult {
   const { a, kappa, lambda, bathRatioMinusOne: eps } = input;
+  requireRange(input);
   const c = constants(a, kappa, eps);
   const scaleMass = exact(lambda);
   let m: Ball;
@@ -171,4 +173,26 @@ function kindOf(c: Constants, d: Ball, hartleHawking: boolean): ClosedFormKind |
   if (mayVanish(d)) return "undecided";
   if (d.v < 0) return hartleHawking ? undefined : "naked-singularity";
   return c.p.v === 0 ? "horizon" : "throat";
+}
+
+function requireRange(input: ClosedFormInput): void {
+  const { a, kappa, lambda, bathRatioMinusOne: eps, mass, massAboveCritical, horizonDilaton } =
+    input;
+  const refuse = (what: string, value: unknown) => {
+    throw new RangeError(`Cannot evaluate the closed form as ${what}: current value is ${value}`);
+  };
+  if (!(a >= 0 && a <= 2)) refuse("a must lie in [0, 2]", a);
+  if (!(kappa > 0 && kappa < Infinity)) refuse("kappa must be positive and finite", kappa);
+  if (!(lambda > 0 && lambda < Infinity)) refuse("lambda must be positive and finite", lambda);
+  if (!(eps >= -1 && eps < Infinity)) refuse("the bath ratio must not be negative", 1 + eps);
+  const given = Number(mass !== undefined) + Number(massAboveCritical !== undefined) +
+    Number(horizonDilaton !== undefined);
+  const amount = mass ?? massAboveCritical ?? horizonDilaton;
+  if (given !== 1) {
+    refuse("exactly one of mass, massAboveCritical and horizonDilaton must be given", given);
+  }
+  if (!Number.isFinite(amount)) refuse("the mass or horizon dilaton must be finite", amount);
+  if (horizonDilaton !== undefined && eps !== 0) {
+    refuse("the bath ratio must be 1 where horizonDilaton is given", 1 + eps);
+  }
 }

@@ -57,3 +57,11 @@ export function familyRows(count: number, seed: number): FamilyRow[] {
     return { ...row, mass: lambda * mass };
   });
 }
+
+/** The row as the solver takes it; a = 1/2 and a = 0 under the names of their models. */
+export function familyInput(row: FamilyRow, tolerance = 1e-10): RowInput {
+  const { a, ...rest } = row;
+  if (a === 0.5) return { model: "rst", tolerance, ...rest };
+  if (a === 0) return { model: "bpp", tolerance, ...rest };
+  return { model: "solvable", a, tolerance, ...rest };
+}
