@@ -5,6 +5,7 @@
  * @module
  */
 
+import type { RowInput } from "../../lib/model/input.ts";
 import { type FamilyRow, familyValues } from "./closed_form.ts";
 
 /** Numbers in [0, 1) of a seed: a 32-bit linear congruential generator with xor-shift output. */
