@@ -5,6 +5,7 @@
  * @module
  */
 import { mathjsDerivative, neutral } from "./precise.ts";
+import { normalForm } from "./normal.ts";
 import { parse } from "./parse.ts";
 import { print } from "./print.ts";
 import type { Operation } from "./nerdamer.ts";
@@ -14,7 +15,7 @@ import { compare, differences, type Witness, type WitnessOptions } from "./verif
 
 /** A proposal that was not believed. */
 export interface Discarded {
-  readonly op: Operation;
+  readonly op: Operation | "normal form";
   readonly input: string;
   /** What was proposed, or the error the algebra system gave. */
   readonly proposed: string;
@@ -141,8 +142,11 @@ export function size(e: Expr): number {
  */
 export async function simplify(e: Expr, options: AlgebraOptions = {}): Promise<Expr> {
   let best = e;
-  for (const op of ["expand", "simplify"] as const) {
-    const p = await proposal(op, e, undefined, options);
+  const positive = (n: string) => (options.ranges?.[n]?.[0] ?? 0) >= 0;
+  for (const op of ["normal form", "expand", "simplify"] as const) {
+    const p = op === "normal form"
+      ? normalForm(e, { positive })
+      : await proposal(op, e, undefined, options);
     if (!p) continue;
     const w = await compare(e, p, options);
     if (w.outcome !== "agree") {

@@ -36,11 +36,13 @@ export const LIMITS = {
   /** brackets within brackets */
   depth: 100,
   /** nodes of the tree */
-  nodes: 20_000,
+  nodes: 5_000,
   /** magnitude of an exact exponent */
   exponent: 64n,
   /** digits of a literal, and the magnitude of its decimal exponent */
   digits: 400,
+  /** magnitude of numerator and denominator of an exact constant, also of a folded one */
+  constant: 10n ** 1000n,
 } as const;
 
 const FORBIDDEN = new Set(["constructor", "prototype", "toString", "valueOf", "hasOwnProperty"]);
@@ -111,8 +113,12 @@ export function parse(text: string): Expr {
   const list = tokens(text);
   let i = 0, nodes = 0, depth = 0;
   const peek = () => list[i]?.text;
-  const count = <T>(e: T): T => {
+  const count = (e: Expr): Expr => {
     if (++nodes > LIMITS.nodes) fail(text, 0, `it may have at most ${LIMITS.nodes} nodes`, "more");
+    const big = LIMITS.constant;
+    if (e.kind === "num" && (e.p > big || e.p < -big || e.q > big)) {
+      fail(text, 0, "an exact constant may have at most 1000 digits", "more");
+    }
     return e;
   };
   const expect = (mark: string) => {

@@ -120,15 +120,22 @@ export function neg(a: Expr): Expr {
   return { kind: "neg", a };
 }
 
+const LARGE = 10n ** 120n;
+
 /** a ^ b; exact for rational a and small integer b. */
 export function pow(a: Expr, b: Expr): Expr {
   if (isNum(b, 0)) return num(1);
   if (isNum(b, 1)) return a;
-  if (b.kind === "num" && b.q === 1n && a.kind === "num" && b.p >= -64n && b.p <= 64n) {
+  if (b.kind === "num" && b.q === 1n && a.kind === "num" && b.p >= -64n && b.p <= 64n && small(a)) {
     if (b.p > 0n) return num(a.p ** b.p, a.q ** b.p);
     return num(a.q ** -b.p, a.p ** -b.p);
   }
   return { kind: "pow", a, b };
+}
+
+/** Whether powers up to 64 stay within some thousand digits; larger ones are not folded. */
+function small(a: Num): boolean {
+  return a.p > -LARGE && a.p < LARGE && a.q < LARGE;
 }
 
 /** fn(a); exact at the neutral argument (exp 0 = 1, log 1 = 0, ...). */

@@ -5,6 +5,8 @@
  * @module
  */
 import { type AlgebraOptions, proposal } from "./algebra.ts";
+import { normalIsZero } from "./normal.ts";
+import type { Ranges } from "./points.ts";
 import { type Expr, isNum, num } from "./tree.ts";
 import { compare, type Witness } from "./verify.ts";
 
@@ -36,9 +38,21 @@ export interface ZeroDecision {
 export async function decideZero(e: Expr, options: AlgebraOptions = {}): Promise<ZeroDecision> {
   const witness = await compare(e, num(0), { count: 20, ...options });
   if (witness.outcome === "differ") return { verdict: "nonzero", algorithm: "", witness };
-  const exact = isNum(e, 0);
-  const expanded = exact ? e : await proposal("expand", e, undefined, options);
-  const algorithm = exact ? "exact constants" : expanded && isNum(expanded, 0) ? "expansion" : "";
+  const algorithm = await reachesZero(e, options);
   if (witness.outcome === "no-points") return { verdict: "undecided", algorithm, witness };
   return { verdict: algorithm ? "proved" : "holds-numerically", algorithm, witness };
+}
+
+/** Whether a name is drawn from positive values only. */
+export function isPositive(name: string, ranges: Ranges = {}): boolean {
+  return (ranges[name]?.[0] ?? 0) >= 0;
+}
+
+async function reachesZero(e: Expr, options: AlgebraOptions): Promise<string> {
+  if (isNum(e, 0)) return "exact constants";
+  if (normalIsZero(e, { positive: (n) => isPositive(n, options.ranges) }) === true) {
+    return "rational normal form";
+  }
+  const expanded = await proposal("expand", e, undefined, options);
+  return expanded && isNum(expanded, 0) ? "expansion by the algebra system" : "";
 }
