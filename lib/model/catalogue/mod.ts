@@ -1,0 +1,12 @@
+/**
+ * The catalogue of models.
+ *
+ * @module
+ */
+import type { ModelName } from "../input.ts";
+import type { Model } from "../model.ts";
+import { bpp, cghs, rst, solvable } from "./linear_dilaton.ts";
+import { swave } from "./spherical.ts";
+
+/** Models by name. */
+export const CATALOGUE: Readonly<Record<ModelName, Model>> = { cghs, rst, bpp, solvable, swave };

@@ -1,0 +1,128 @@
+/**
+ * Follows a linear-dilaton solution inwards from its asymptotic region until its kind shows.
+ *
+ * @module
+ */
+import type { Engine } from "../engine.ts";
+import { land } from "../land.ts";
+import type { Arithmetic } from "../arithmetic/arithmetic.ts";
+import { type CriticalLocus, followToLocus } from "../naked.ts";
+import type { Walker } from "../series/walker.ts";
+import { SETTINGS } from "../settings.ts";
+import { type FarProblem, farSeries, farStart } from "./far_series.ts";
+import type { Parameters } from "../engine.ts";
+
+/** How a solution ends, in units where max(|m|, kappa) = 1; outputs of the u-form at the locus. */
+export type LinearEnd<T> =
+  | {
+    readonly end: "throat" | "horizon" | "zero";
+    readonly at: Readonly<Record<string, T>>;
+    readonly steps: number;
+    readonly walker: Walker<T>;
+  }
+  | {
+    readonly end: "locus";
+    readonly lngtt: T;
+    readonly Ep: T;
+    readonly sigma: T;
+    readonly state: T;
+    readonly steps: number;
+  }
+  | { readonly end: "gave-up"; readonly why: string; readonly steps: number };
+
+/** Sizes below which the unknowns of the u-form need no relative accuracy. */
+export function floorsOf(kappa: number): Readonly<Record<string, number>> {
+  return { F: 1, w: 1e-6 * kappa, v: 1e-6 * kappa, gap: 1, E: 1e-3 };
+}
+
+/** Parameters of the u-form. */
+export function parametersOf<T>(p: FarProblem<T>, own: Parameters<T>): Parameters<T> {
+  return { kappa: p.kappa, eps: p.eps, ...own };
+}
+
+/**
+ * Integrates inwards.
+ *
+ * @param engine Arithmetic and model.
+ * @param p Constants, scaled.
+ * @param own The model's own parameters.
+ */
+export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T>): LinearEnd<T> {
+  const A = engine.arithmetic, x = A.toNumber, { solvable } = engine.model;
+  const parameters = parametersOf(p, own), floors = floorsOf(x(p.kappa));
+  const u0 = farStart(A, p, SETTINGS.far.linearDilaton);
+  const far = farSeries(A, p, A.from(u0), engine.startTerms);
+  let form = "outer", walker = engine.walker(form, parameters, floors, 1);
+  walker.place(A.from(u0), solvable ? [far.F] : [far.F, far.w, far.v]);
+  let tried = Infinity;
+  for (let steps = 0; steps < SETTINGS.steps; steps++) {
+    const o = walker.outputs(),
+      E = x(o.E!),
+      T = x(o.T!),
+      X = x(o.X!),
+      D = x(o.D!),
+      ratio = x(o.eratio!);
+    if (!(E > 0) || Number.isNaN(D)) {
+      return { end: "gave-up", why: "the solution became singular", steps };
+    }
+    if (T === 0 && X < 1e-6 * A.epsilon * A.epsilon) {
+      return { end: "horizon", at: o, steps, walker };
+    }
+    const Ep = x(o.Ep!), F = E - Math.exp(x(walker.time()));
+    const falling = T > 0 || F < 0; // E may reach the critical locus
+    const toLocus = Ep > 0 && E < tried &&
+      ((x(o.BS!) < 0.3 && ratio > 1.5) || (T > 0 && E < 0.5) ||
+        (F < 0 && ratio > 1 && E < Math.max(0.5, 4 * Ep)));
+    if (toLocus) {
+      const start = { phi: o.phi!, rho: o.rho!, chi: o.chi!, sigma: o.sigma! };
+      const end = followToLocus(engine, start, criticalLocus(A, p, own, o.Ep!));
+      if (end) {
+        const { lngtt, sigma } = end;
+        return { end: "locus", lngtt, sigma, Ep: o.Ep!, state: o.state!, steps: steps + end.steps };
+      }
+      tried = 0.8 * E; // the dilaton turned: go on in u and look again later
+    }
+    const next = ratio > 0.5 ? "outer" : "inner";
+    if (next !== form) {
+      const from = walker;
+      walker = engine.walker(next, parameters, floors, 1);
+      walker.place(from.time(), from.state());
+      form = next;
+    }
+    const followed = [...(T < 0 ? ["gap"] : []), ...(falling || Ep === 0 ? ["E"] : [])];
+    const safe = walker.expand(followed);
+    if (!(safe > 0)) return { end: "gave-up", why: "the step shrank to nothing", steps };
+    let h = -Math.min(safe, T < 0 || X > 1e-30 ? 64 : 1e300);
+    if (falling && safe > 64) h = -Math.min(-h, reach(walker, "E", E));
+    if (falling && Ep > 0) { while (!(walker.series("E", h) >= 0.25 * E)) h /= 2; }
+    const zero = Ep === 0 && walker.series("E", h) <= 0;
+    if (zero || (T < 0 && walker.series("gap", h) <= 0)) {
+      land(walker, zero ? "E" : "gap", h, followed, (s) => engine.taken(form, walker, s));
+      return { end: zero ? "zero" : "throat", at: walker.outputs(), steps, walker };
+    }
+    engine.taken(form, walker, h);
+    walker.advance(h);
+  }
+  return { end: "gave-up", why: "the step budget is used up", steps: SETTINGS.steps };
+}
+
+/** Twice the distance at which the tangent of a falling series reaches zero. */
+function reach<T>(walker: Walker<T>, name: string, now: number): number {
+  const probe = 1e-6 * walker.unit, slope = (now - walker.series(name, -probe)) / probe;
+  return slope > 0 ? 2 * now / slope : Infinity;
+}
+
+/** The critical locus E = Ep and the forms' parameters there. */
+function criticalLocus<T>(
+  A: Arithmetic<T>,
+  p: FarProblem<T>,
+  own: Parameters<T>,
+  Ep: T,
+): CriticalLocus<T> {
+  const tau = A.sub(A.from(1), p.eps);
+  return {
+    parameters: { kappa: p.kappa, c4: A.mul(p.kappa, A.mul(tau, tau)), e: A.from(-1), Ep, ...own },
+    near: -Math.log(4 * A.toNumber(Ep)) / 2,
+    y: (phi) => A.sqrt(A.sub(A.exp(A.mul(A.from(-2), phi)), Ep)),
+  };
+}
