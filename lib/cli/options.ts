@@ -27,6 +27,9 @@ export class UsageError extends Error {
   }
 }
 
+/** Key of the arguments that are no options, in a command that takes them. */
+export const ARGUMENTS = "";
+
 /** Values by option: each value given, in order; a switch that is given has one empty value. */
 export type Values = ReadonlyMap<string, readonly string[]>;
 
@@ -37,12 +40,13 @@ export const HELP: CommandOption = { name: "help", meaning: "Print this text." }
  * Parses a command line.
  *
  * @param args Arguments.
- * @param options What the command takes.
+ * @param options What the command takes; one named {@linkcode ARGUMENTS} takes the other arguments.
  * @returns Values of the options given.
  * @throws {UsageError} with every unknown, valueless or repeated option and stray argument.
  */
 export function parseOptions(args: readonly string[], options: readonly CommandOption[]): Values {
   const known = new Map([...options, HELP].map((option) => [option.name, option]));
+  const taken = known.delete(ARGUMENTS);
   const { tokens } = parseArgs({
     args: [...args],
     options: Object.fromEntries(
@@ -55,9 +59,11 @@ export function parseOptions(args: readonly string[], options: readonly CommandO
   const values = new Map<string, string[]>(), faults: string[] = [];
   for (const token of tokens) {
     if (token.kind === "positional") {
-      faults.push(
-        `Cannot use the argument ${JSON.stringify(token.value)} as only options are taken`,
-      );
+      const { value } = token;
+      if (taken) values.set(ARGUMENTS, [...values.get(ARGUMENTS) ?? [], value]);
+      else {faults.push(
+          `Cannot use the argument ${JSON.stringify(value)} as only options are taken`,
+        );}
     }
     if (token.kind !== "option") continue;
     const option = known.get(token.name);
@@ -89,7 +95,8 @@ export function helpText(
   purpose: string,
   options: readonly CommandOption[],
 ): string {
-  const head = (o: CommandOption) => `--${o.name}${o.value ? ` ${o.value}` : ""}`;
+  const head = ({ name, value }: CommandOption) =>
+    name === ARGUMENTS ? value! : `--${name}${value ? ` ${value}` : ""}`;
   const all = [...options, HELP], width = Math.max(...all.map((o) => head(o).length));
   const lines = all.map((o) => `  ${head(o).padEnd(width)}  ${o.meaning}`);
   return [`deno task ${command} [options]`, purpose, "", ...lines].join("\n");

@@ -5,7 +5,7 @@
  */
 import { launch } from "./launch.ts";
 import { helpText, parseOptions } from "./options.ts";
-import { RUN_OPTIONS, runRequest } from "./run_options.ts";
+import { RUN_OPTIONS, type RunRequest, runRequest } from "./run_options.ts";
 import { closing } from "./status.ts";
 
 const PURPOSE = "Solves every row of a parameter table; run again, it completes what is missing.";
@@ -16,7 +16,16 @@ async function main(args: readonly string[]): Promise<number> {
     console.log(helpText("run", PURPOSE, RUN_OPTIONS));
     return 0;
   }
-  const request = runRequest(values, args);
+  return await solveTable(runRequest(values, args));
+}
+
+/**
+ * Solves a table in a process that may read and write only what belongs to the run.
+ *
+ * @param request What `deno task run` is asked.
+ * @returns Exit status.
+ */
+export async function solveTable(request: RunRequest): Promise<number> {
   const { table, out, profiles } = request;
   const lists = typeof profiles === "object" ? [profiles.file] : [];
   return await launch("solve.ts", {

@@ -20,6 +20,8 @@ export interface KernelPlace {
   readonly cwd: string;
   /** Variables added to the environment. */
   readonly env: Readonly<Record<string, string>>;
+  /** Folder for the connection file, removed as soon as the kernel answers. @default the system's */
+  readonly scratch?: string;
 }
 
 /** Stray text kept (characters). */

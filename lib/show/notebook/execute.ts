@@ -4,6 +4,7 @@
  * @module
  */
 import { type Ending, type Limits, supervise, syntaxFault } from "./cell.ts";
+import type { KernelPlace } from "./child.ts";
 import { type Cell, type Notebook, type Output, wholeText } from "./document.ts";
 import { Flusher, silentRequest } from "./flush.ts";
 import { type Kernel, startKernel } from "./kernel.ts";
@@ -12,13 +13,8 @@ import { OutputCollector } from "./outputs.ts";
 import { reportStrayErrors } from "./stray_errors.ts";
 import { trackTimers } from "./timers.ts";
 
-/** Options of {@linkcode executeNotebook}. */
-export interface ExecuteOptions extends Limits {
-  /** Working directory of the kernel: the folder of the notebook. */
-  readonly cwd: string;
-  /** Variables added to the kernel's environment. */
-  readonly env: Readonly<Record<string, string>>;
-}
+/** Options of {@linkcode executeNotebook}: where the kernel runs, and for how long at most. */
+export interface ExecuteOptions extends KernelPlace, Limits {}
 
 /** The cell at which an execution stopped. */
 export interface CellFailure {
@@ -39,6 +35,9 @@ export interface Executed {
   /** Text that the kernel's process wrote past the notebook, such as output of child processes. */
   readonly strayText: string;
 }
+
+/** What the kernel itself writes: a warning at its start, a note at every interrupt. */
+const CHATTER = /^(Warning "deno jupyter" is unstable|CDP response has null result).*\n+/gm;
 
 /** Timers set by the notebook that fire within this time after the last cell are waited for (ms). */
 const SETTLE = 10_000;
@@ -64,7 +63,7 @@ export async function executeNotebook(
   notebook.metadata.language_info = kernel.languageInfo;
   try {
     const failed = await runCells(kernel, filled, options);
-    const strayText = kernel.strayText().replace(/^Warning "deno jupyter" is unstable.*\n/, "");
+    const strayText = kernel.strayText().replace(CHATTER, "");
     if (failed === undefined) return { notebook, strayText };
     const position = notebook.cells.indexOf(failed.cell) + 1;
     const failure = { position, id: failed.cell.id ?? "", message: failed.message };

@@ -42,7 +42,11 @@ export async function startKernel(place: KernelPlace): Promise<Kernel> {
   let failure = "";
   for (let start = 0; start < STARTS; start++) {
     const ports = freePorts(5);
-    const file = await Deno.makeTempFile({ prefix: "kernel-", suffix: ".json" });
+    const file = await Deno.makeTempFile({
+      prefix: ".kernel-",
+      suffix: ".json",
+      ...(place.scratch === undefined ? {} : { dir: place.scratch }),
+    });
     try {
       const key = crypto.randomUUID();
       await Deno.writeTextFile(file, connectionText(ports, key));
