@@ -6,11 +6,7 @@
 import { basename, dirname, join } from "node:path";
 import { notebookText, parseNotebook } from "./document.ts";
 import { type CellFailure, executeNotebook } from "./execute.ts";
-
-/** Variable of the kernel's environment that names the run a notebook reads (absolute path). */
-export const RUN_VARIABLE = "BACKSTAMP_RUN";
-/** Variable of the kernel's environment that names the folder of large displays (absolute path). */
-export const DISPLAYS_VARIABLE = "BACKSTAMP_DISPLAYS";
+import { DISPLAYS_VARIABLE, RUN_VARIABLE } from "./variables.ts";
 
 /** How a notebook file is executed. */
 export interface ExecuteFileOptions {

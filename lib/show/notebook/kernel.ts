@@ -64,7 +64,16 @@ export async function startKernel(place: KernelPlace): Promise<Kernel> {
   throw new Error(`Cannot start a kernel as "deno jupyter" must run: ${failure}`);
 }
 
-async function connectKernel(
+/**
+ * Connects to a kernel that is being started.
+ *
+ * @param process its process
+ * @param ports ports of its connection file: shell, control, iopub
+ * @param key secret of its connection file
+ * @returns the kernel, as soon as it answers and its published messages arrive
+ * @throws {Error} if it ends or does not answer
+ */
+export async function connectKernel(
   process: KernelProcess,
   [shellPort, controlPort, iopubPort]: readonly number[],
   key: string,
@@ -178,7 +187,15 @@ async function connectWhenUp(
   throw new Error("it did not listen in time");
 }
 
-function connectionText([shell, control, iopub, stdin, heartbeat]: number[], key: string): string {
+/**
+ * @param ports ports in the order shell, control, iopub, stdin, heartbeat
+ * @param key secret that signs the messages
+ * @returns contents of a Jupyter connection file
+ */
+export function connectionText(
+  [shell, control, iopub, stdin, heartbeat]: number[],
+  key: string,
+): string {
   return JSON.stringify({
     transport: "tcp",
     ip: "127.0.0.1",
@@ -192,8 +209,13 @@ function connectionText([shell, control, iopub, stdin, heartbeat]: number[], key
   });
 }
 
-/** Ports that nobody listens on now: all held at once so that they differ, then let go. */
-function freePorts(count: number): number[] {
+/**
+ * Ports of 127.0.0.1 that nobody listens on now.
+ *
+ * @param count how many
+ * @returns different ports: all were held at once, then let go
+ */
+export function freePorts(count: number): number[] {
   const listeners = Array.from(
     { length: count },
     () => Deno.listen({ hostname: "127.0.0.1", port: 0 }),
