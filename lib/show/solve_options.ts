@@ -1,0 +1,118 @@
+/**
+ * Options of a single solution, typed so that a combination which no table may have does not compile, and
+ * checked again when it runs.
+ *
+ * @module
+ */
+import { PARAMETER_COLUMNS } from "../batch/columns.ts";
+import { type Fault, quoted } from "../batch/fault.ts";
+import { nearest } from "../batch/nearest.ts";
+import { readRow, type TableRow } from "../batch/row_reader.ts";
+
+type Absent<T> = { readonly [K in keyof T]?: never };
+/** One of two groups of options and none of the other. */
+export type Either<A, B> = (A & Absent<B>) | (B & Absent<A>);
+
+/** kappa = N/12, or the number N of conformal scalars. */
+export type Matter = Either<{ readonly kappa: number }, { readonly nScalars: number }>;
+/** Bath temperature over the natural one, or its difference from 1. */
+export type Bath = Either<
+  { readonly bathRatio: number },
+  { readonly bathRatioMinusOne: number }
+>;
+
+interface Mass {
+  /** Mass M, see the conventions page. */
+  readonly mass: number;
+}
+interface Above {
+  /** m minus its critical value, m = M/lambda. */
+  readonly massAboveCritical: number;
+}
+interface Horizon {
+  /** Dilaton at the horizon; swave: horizon radius. */
+  readonly horizonDilaton: number;
+}
+interface Wall {
+  /** Areal radius of the cavity wall. */
+  readonly wallRadius: number;
+}
+interface Scale {
+  /** Scale of the linear dilaton. @default 1 */
+  readonly lambda?: number;
+}
+
+type Linear =
+  | { readonly model: "cghs" } & ByState<Mass, Either<Mass, Horizon>>
+  | { readonly model: "rst" | "bpp" } & Family
+  | { readonly model: "solvable"; /** Family parameter in [0, 2]. */ readonly a: number } & Family;
+type Family = ByState<
+  Either<Mass, Above>,
+  Either<Mass, Above> & Absent<Horizon> | Horizon & Absent<Mass & Above>
+>;
+type ByState<Any, Regular> =
+  | { readonly state: "boulware" } & Any
+  | { readonly state: "thermal" } & Any & Bath
+  | { readonly state: "hartle-hawking" } & Regular;
+type SWave =
+  | { readonly state: "boulware" } & Mass
+  | { readonly state: "thermal" } & Mass & Bath & Wall
+  | { readonly state: "hartle-hawking" } & Either<Mass, Horizon> & Wall;
+
+/** What a single solution is asked for: the columns of a parameter table in camel case. */
+export type SolveOptions =
+  & Matter
+  & { /** Relative tolerance on the locus columns. @default 1e-10 */ readonly tolerance?: number }
+  & ((Linear & Scale) | ({ readonly model: "swave" } & SWave));
+
+const camel = (column: string): string => column.replace(/_([a-z])/g, (_, c) => c.toUpperCase());
+const COLUMN_OF = new Map(
+  ["model", "state", ...PARAMETER_COLUMNS.map((column) => column.name)].map((c) => [camel(c), c]),
+);
+/** Option names in a sentence that speaks of columns. */
+const inOptions = (text: string): string =>
+  [...COLUMN_OF].reduce((t, [name, column]) => t.replaceAll(column, name), text)
+    .replaceAll("must be empty", "must be absent");
+
+/** Options that cannot be solved; nothing was run. */
+export class OptionsError extends RangeError {
+  /** @param faults every fault, one line each */
+  constructor(faults: readonly string[]) {
+    const count = `${faults.length} fault${faults.length === 1 ? "" : "s"}`;
+    super(`Cannot solve as the options have ${count}:\n${faults.join("\n")}`);
+    this.name = "OptionsError";
+  }
+}
+
+/**
+ * Checks options as a row of a parameter table is checked.
+ *
+ * @param options options
+ * @returns the row
+ * @throws {OptionsError} with every fault; unknown names with the nearest right one
+ */
+export function rowOf(options: SolveOptions): TableRow {
+  const cells = new Map<string, string>();
+  const faults: string[] = [];
+  for (const [name, value] of Object.entries(options as unknown as Record<string, unknown>)) {
+    if (value === undefined) continue;
+    const column = COLUMN_OF.get(name);
+    if (column === undefined) {
+      const names = [...COLUMN_OF.keys()];
+      faults.push(`${name}: must be one of ${names.join(", ")} (nearest: ${nearest(name, names)})`);
+    } else if (typeof value === "number" || column === "model" || column === "state") {
+      cells.set(column, String(value));
+    } else {
+      faults.push(`${name}: must be a number: current value is ${quoted(String(value))}`);
+    }
+  }
+  const told = (fault: Fault): string => `${camel(fault.column ?? "")}: ${inOptions(fault.text)}`;
+  const { row, faults: found } = readRow({
+    line: 1,
+    text: (column) => column === "case" ? "solution" : cells.get(column) ?? "",
+    has: () => true,
+  });
+  faults.push(...found.map(told));
+  if (faults.length > 0 || row === undefined) throw new OptionsError(faults);
+  return row;
+}
