@@ -40,11 +40,27 @@ export async function derivedFunctions(model: Model): Promise<Readonly<Record<st
   const H = add(read(model.classical.H), mul(kappa, H1)),
     K = add(read(model.classical.K), mul(kappa, K1));
   const V = read(model.classical.V);
-  const [H_phi, V_phi, h] = await Promise.all([H, V, H1].map((f) => differentiate(f, "phi")));
+  const [H_phi, K_phi, V_phi, h] = await Promise.all(
+    [H, K, V, H1].map((f) => differentiate(f, "phi")),
+  );
+  const H_phiphi = await differentiate(H_phi!, "phi");
   const [hp, hk, delta] = await Promise.all(
     [add(num(1), h!), add(h!, K1), add(add(num(1), mul(num(2), h!)), K1)].map((e) => simplify(e)),
   );
-  return { H, K, V, H_phi: H_phi!, V_phi: V_phi!, h: h!, k: K1, hp: hp!, hk: hk!, delta: delta! };
+  return {
+    H,
+    K,
+    V,
+    H_phi: H_phi!,
+    H_phiphi,
+    K_phi: K_phi!,
+    V_phi: V_phi!,
+    h: h!,
+    k: K1,
+    hp: hp!,
+    hk: hk!,
+    delta: delta!,
+  };
 }
 
 /** Refuses a model whose classical part is not that of its family, or whose counterterms bend. */
@@ -88,7 +104,14 @@ function forms(
     series: [],
     outputs: ["hp", "k", "delta"],
   };
+  const action: SystemText = {
+    ...slopes,
+    independent: "phi",
+    parameters: ["kappa", ...withPi(family, own)],
+    outputs: ["H_phi", "H_phiphi", "K", "K_phi", "V", "V_phi"],
+  };
   const shared = {
+    action,
     slopes,
     dilaton: inDilaton(withPi(family, own)),
     root: inRoot(family, solvable, withPi(family, own)),

@@ -10,7 +10,7 @@ import { double } from "./arithmetic/double.ts";
 import { type DoubleDouble, doubleDouble } from "./arithmetic/double_double.ts";
 import { doubleDoubleCode, DoubleDoubleWalker } from "./series/double_double_walker.ts";
 import { type DoubleCode, doubleCode, DoubleWalker } from "./series/double_walker.ts";
-import type { Walker } from "./series/walker.ts";
+import type { Accuracy, Walker } from "./series/walker.ts";
 import { SETTINGS } from "./settings.ts";
 
 /** Values of a form's parameters. */
@@ -43,6 +43,10 @@ export interface Engine<T> {
   ): Walker<T>;
   /** Called with every step taken, before the walker moves. */
   taken(form: string, walker: Walker<T>, h: number): void;
+  /** Forgets the steps recorded since `count` were (an attempt that led nowhere). */
+  forget(count: number): void;
+  /** Number of steps recorded. */
+  recorded(): number;
 }
 
 function kept<K, V>(make: (key: K) => V): (key: K) => V {
@@ -57,7 +61,7 @@ function kept<K, V>(make: (key: K) => V): (key: K) => V {
 }
 
 /** Names of the dense outputs of every form. */
-export const DENSE = ["phi", "rho", "sigma", "erho"] as const;
+export const DENSE = ["phi", "rho", "sigma", "erho", "flux"] as const;
 
 /** Double-precision engine factory of a model; `record` receives dense steps. */
 export function doubleEngine(model: CompiledModel): (record?: DenseStep[]) => Engine<number> {
@@ -74,19 +78,26 @@ export function doubleEngine(model: CompiledModel): (record?: DenseStep[]) => En
       const w = walker as DoubleWalker;
       record.push({ form, code: w.code, table: w.table.slice(), unit: w.unit, t: w.time(), h });
     },
+    forget: (count) => {
+      if (record) record.length = count;
+    },
+    recorded: () => record?.length ?? 0,
   });
 }
 
 /** Double-double engine of a model. */
-export function doubleDoubleEngine(model: CompiledModel): Engine<DoubleDouble> {
-  const code = kept((form: string) =>
-    doubleDoubleCode(model.programs[form]!, SETTINGS.doubleDouble)
-  );
+export function doubleDoubleEngine(
+  model: CompiledModel,
+  settings: Accuracy & { readonly start: number },
+): Engine<DoubleDouble> {
+  const code = kept((form: string) => doubleDoubleCode(model.programs[form]!, settings));
   return {
     model,
     arithmetic: doubleDouble,
-    startTerms: SETTINGS.doubleDouble.start,
+    startTerms: settings.start,
     walker: (form, p, floors, unit) => new DoubleDoubleWalker(code(form), p, floors, unit),
     taken: () => {},
+    forget: () => {},
+    recorded: () => 0,
   };
 }

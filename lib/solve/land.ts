@@ -43,9 +43,7 @@ export function land<T>(
   const size = Math.abs(walker.arithmetic.toNumber(walker.time())) + Math.abs(h);
   for (let i = 0; i < 6; i++) {
     const step = walker.expand(followed);
-    const f0 = walker.series(name, 0), probe = 1e-6 * Math.min(step, Math.abs(h) || step);
-    const slope = (walker.series(name, probe) - f0) / probe;
-    const correction = -f0 / slope;
+    const correction = -walker.series(name, 0) / walker.slope(name);
     if (!(Math.abs(correction) < step) || Math.abs(correction) < walker.arithmetic.epsilon * size) {
       return;
     }

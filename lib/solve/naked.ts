@@ -54,10 +54,12 @@ export function followToLocus<T>(
     while (direction * (locus.near - A.toNumber(walker.time())) > 0) {
       const safe = walker.expand([]), left = locus.near - A.toNumber(walker.time());
       if (!(safe > 1e-13 * Math.abs(left)) || ++steps > SETTINGS.steps) return undefined;
-      const h = safe < Math.abs(left) ? direction * safe : left;
+      // a radius shrinks at most fourfold a step: its relative rounding must stay small
+      const most = inward < 0 ? Math.min(safe, 0.75 * A.toNumber(walker.time())) : safe;
+      const h = most < Math.abs(left) ? direction * most : left;
       engine.taken("dilaton", walker, h);
       walker.advance(h);
-      if (safe >= Math.abs(left)) break;
+      if (most >= Math.abs(left)) break;
     }
     const o = walker.outputs();
     phi = walker.time();

@@ -10,6 +10,8 @@ export const SETTINGS = {
   double: { order: 24, tolerance: 1e-18, start: 8 },
   /** Double-double precision. */
   doubleDouble: { order: 40, tolerance: 1e-33, start: 17 },
+  /** Double-double with other truncation, the check of rows where double precision fails. */
+  check: { order: 34, tolerance: 1e-30, start: 14 },
   /** Far start: e^u (or r) in units of the largest scale of the problem. */
   far: { linearDilaton: 128, spherical: 32 },
   /** Steps after which a row is given up. */

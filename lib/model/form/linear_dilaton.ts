@@ -78,9 +78,11 @@ export function linearDilaton(
       ["rho", "lngtt/2"],
       ["sigma", "u/2"],
       ["erho", "exp(rho)"],
+      ["phiu", "-Eu/(2*E)"],
+      ["flux", "-4*((eps/2+v)*(1-eps/2+v)+(1+2*v)*phiu+phiu^2)"], // c^2/4 - rho'^2
     ],
     derivative: { F: "Fu", w: "v", v: "vu" },
-    series: ["E", "T", "D", "gap", "lnX"],
+    series: ["E", "T", "D", "gap", "lngtt"],
     outputs: [
       "E",
       "D",
@@ -92,6 +94,7 @@ export function linearDilaton(
       "rho",
       "sigma",
       "erho",
+      "flux",
       "lngtt",
       "lngtt_throat",
       "curvature",

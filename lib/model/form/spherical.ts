@@ -29,7 +29,7 @@ export function spherical(surroundings: Surroundings): SystemText {
   return {
     independent: "sigma",
     unknowns: ["rho", "mu", "om"],
-    parameters: bath ? ["b", "m", "eta", "pi", "kappa"] : ["b", "m", "pi", "kappa"],
+    parameters: bath ? ["b", "m", "eta", "rw", "pi", "kappa"] : ["b", "m", "pi", "kappa"],
     let: [
       ["g", "exp(2*rho)"],
       ["mg", "-expm1(2*rho)"],
@@ -57,10 +57,12 @@ export function spherical(surroundings: Surroundings): SystemText {
       ["chi", "(q/p+1/(r+sqrt(d)))/t"],
       ["state", "-tb"],
       ["phi", "r"],
+      ...(bath ? [["wall", "r-rw"]] as const : []),
       ["erho", "exp(rho)"],
+      ["flux", "tb"], // c^2/4 - rho'^2
     ],
     derivative: { rho: "q", mu: "tb", om: "dp*mg+g*A" },
-    series: ["r", "T", "D", "gap", "q"],
+    series: ["r", "T", "D", "gap", "lngtt", ...(bath ? ["wall"] : [])],
     outputs: [
       "r",
       "phi",
@@ -75,6 +77,7 @@ export function spherical(surroundings: Surroundings): SystemText {
       "rho",
       "sigma",
       "erho",
+      "flux",
       "lngtt",
       "lngtt_throat",
       "curvature",

@@ -7,7 +7,7 @@ import type { Engine } from "../engine.ts";
 import { land } from "../land.ts";
 import type { Arithmetic } from "../arithmetic/arithmetic.ts";
 import { type CriticalLocus, followToLocus } from "../naked.ts";
-import type { Walker } from "../series/walker.ts";
+import { reach, type Walker } from "../series/walker.ts";
 import { SETTINGS } from "../settings.ts";
 import { type FarProblem, farSeries, farStart } from "./far_series.ts";
 import type { Parameters } from "../engine.ts";
@@ -75,11 +75,13 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
         (F < 0 && ratio > 1 && E < Math.max(0.5, 4 * Ep)));
     if (toLocus) {
       const start = { phi: o.phi!, rho: o.rho!, chi: o.chi!, sigma: o.sigma! };
+      const before = engine.recorded();
       const end = followToLocus(engine, start, criticalLocus(A, p, own, o.Ep!));
       if (end) {
         const { lngtt, sigma } = end;
         return { end: "locus", lngtt, sigma, Ep: o.Ep!, state: o.state!, steps: steps + end.steps };
       }
+      engine.forget(before);
       tried = 0.8 * E; // the dilaton turned: go on in u and look again later
     }
     const next = ratio > 0.5 ? "outer" : "inner";
@@ -104,12 +106,6 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
     walker.advance(h);
   }
   return { end: "gave-up", why: "the step budget is used up", steps: SETTINGS.steps };
-}
-
-/** Twice the distance at which the tangent of a falling series reaches zero. */
-function reach<T>(walker: Walker<T>, name: string, now: number): number {
-  const probe = 1e-6 * walker.unit, slope = (now - walker.series(name, -probe)) / probe;
-  return slope > 0 ? 2 * now / slope : Infinity;
 }
 
 /** The critical locus E = Ep and the forms' parameters there. */

@@ -33,8 +33,12 @@ export interface HorizonResult<T> {
   /** Bath ratio minus one, without cancellation. */
   readonly excess: T;
   readonly steps: number;
-  /** Far end of the run in the horizon gauge: u, X, and the shift to the asymptotic gauge. */
+  /** Far end of the run in the asymptotic gauge. */
   readonly uFar: T;
+  /** The same point in the gauge of the run. */
+  readonly uRun: T;
+  /** rho at the inner end of the run. */
+  readonly rhoStart: number;
 }
 
 /**
@@ -86,15 +90,16 @@ export function outward<T>(
   }
   const state = walker.state(), uFar = walker.time();
   const F = state[0]!, w = state[1] ?? zero, v = state[2] ?? zero;
-  return match(engine, p, { u: uFar, F, w, v, steps });
+  const matched = match(engine, p, { u: uFar, F, w, v });
+  return matched && { ...matched, steps, uRun: uFar, rhoStart: (u0 - Math.log(x(p.Eh))) / 2 };
 }
 
 /** Unknown (m, tau - 1, u) from (E, s, X): a contraction, since w and v are of second order in 1/E. */
 function match<T>(
   engine: Engine<T>,
   p: HorizonProblem<T>,
-  far: { readonly u: T; readonly F: T; readonly w: T; readonly v: T; readonly steps: number },
-): HorizonResult<T> | undefined {
+  far: { readonly u: T; readonly F: T; readonly w: T; readonly v: T },
+): Pick<HorizonResult<T>, "m" | "excess" | "uFar"> | undefined {
   const A = engine.arithmetic, x = A.toNumber, one = A.from(1), two = A.from(2);
   const s = A.add(A.div(one, two), far.v);
   let excess = A.neg(A.div(far.v, s)); // as if w were already linear
@@ -117,9 +122,9 @@ function match<T>(
     m = A.add(m, dm);
     [excess, shift] = [newExcess, newShift];
     if (round > 2 && change < A.epsilon * Math.abs(x(p.Eh))) {
-      return { m, excess, steps: far.steps, uFar: A.add(far.u, shift) };
+      return { m, excess, uFar: A.add(far.u, shift) };
     }
     if (!Number.isFinite(change)) return undefined;
   }
-  return { m, excess, steps: far.steps, uFar: A.add(far.u, shift) };
+  return { m, excess, uFar: A.add(far.u, shift) };
 }

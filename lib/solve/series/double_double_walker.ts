@@ -142,6 +142,10 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
     return y;
   }
 
+  slope(name: string): number {
+    return this.#C[this.code.row[name]! * (this.code.accuracy.order + 1) + 1]! / this.unit;
+  }
+
   advance(h: number): void {
     this.#x = this.#x.map((_, i) => this.#sum(i, h));
     this.#t = A.add(this.#t, A.from(h));

@@ -115,6 +115,10 @@ export class DoubleWalker implements Walker<number> {
     return y;
   }
 
+  slope(name: string): number {
+    return this.table[this.code.row[name]! * (this.code.accuracy.order + 1) + 1]! / this.unit;
+  }
+
   advance(h: number): void {
     for (let i = 0; i < this.#x.length; i++) {
       this.#x[i] = this.series(this.code.program.unknowns[i]!, h);

@@ -27,6 +27,8 @@ export interface Walker<T> {
   expand(followed: readonly string[]): number;
   /** Value of a followed series at distance h from the point, rounded to double. */
   series(name: string, h: number): number;
+  /** First derivative of a followed series at the point, rounded to double. */
+  slope(name: string): number;
   /** Moves the point by h (at most the safe step), exactly this double. */
   advance(h: number): void;
   /** Values of the program's outputs at the point. */
@@ -39,4 +41,10 @@ export interface Accuracy {
   readonly order: number;
   /** Relative size of the last term kept. */
   readonly tolerance: number;
+}
+
+/** Twice the distance at which the tangent of a falling series reaches zero. */
+export function reach<T>(walker: Walker<T>, name: string, now: number): number {
+  const slope = walker.slope(name);
+  return slope > 0 ? Math.min(2 * now / slope, 1e300) : 1e300;
 }

@@ -1,0 +1,30 @@
+/**
+ * Whether a row meets the tolerance it asks for.
+ *
+ * @module
+ */
+import type { RowInput } from "../model/input.ts";
+import type { Bounded, NumericColumn } from "./result.ts";
+
+/**
+ * The reason of failure, or an empty string: relative on every locus number; the dilaton of linear-dilaton
+ * models absolute; the mass relative to max(|m|, kappa); -g_tt that underflows is judged by its logarithm.
+ */
+export function unmet(input: RowInput, numbers: Partial<Record<NumericColumn, Bounded>>): string {
+  const spherical = input.model === "swave";
+  for (const [name, b] of Object.entries(numbers)) {
+    if (!b.error || !Number.isFinite(b.value)) continue;
+    if (name === "minus_gtt_locus" && b.value < 1e-300) continue;
+    const size = name === "dilaton_locus" && !spherical
+      ? 1
+      : name === "mass"
+      ? Math.max(Math.abs(b.value), input.kappa * (input.lambda ?? 0))
+      : Math.abs(b.value);
+    if (!(b.error <= input.tolerance * size)) {
+      return `tolerance: the bound of ${name} is ${
+        b.error.toExponential(1)
+      }, the tolerance asks for ${(input.tolerance * size).toExponential(1)}`;
+    }
+  }
+  return "";
+}
