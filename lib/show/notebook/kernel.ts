@@ -20,6 +20,8 @@ export interface Kernel {
   request(type: string, content: Record<string, unknown>): Promise<Message>;
   /** Asks the kernel to stop what it runs. */
   interrupt(): Promise<void>;
+  /** Asks the kernel to end by itself. */
+  shutdown(): Promise<void>;
   /** What the process wrote past the protocol. */
   strayText(): string;
   /** Ends the kernel and waits until it is gone; safe to call twice. */
@@ -115,6 +117,9 @@ export async function connectKernel(
     request: (type: string, content: Record<string, unknown>) => send(shell, type, content),
     interrupt: async () => {
       await send(control, "interrupt_request", {});
+    },
+    shutdown: async () => {
+      await send(control, "shutdown_request", { restart: false });
     },
     strayText: process.strayText,
     stop: async () => {
