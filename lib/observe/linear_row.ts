@@ -122,7 +122,11 @@ export function linearRow<T>(
       evidence: condition,
     };
   }
-  const E = o["E"]!, curvature = A.mul(o["curvature"]!, A.mul(lambda, lambda));
+  const E = o["E"]!, lambda2 = A.mul(lambda, lambda);
+  const R = end.end === "horizon" // R = 4 E/(E - E_p): X and phi_uu underflow together there
+    ? A.div(A.mul(A.from(4), E), A.sub(E, o["Ep"]!))
+    : o["curvature"]!;
+  const curvature = A.mul(R, lambda2);
   const numbers = {
     ...computedMass,
     dilaton_locus: dilaton(E),

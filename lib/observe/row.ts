@@ -7,20 +7,17 @@
 import type { CompiledModel } from "../model/compile.ts";
 import type { RowInput } from "../model/input.ts";
 import type { DoubleDouble } from "../solve/arithmetic/double_double.ts";
-import type { DenseStep, Engine } from "../solve/engine.ts";
-import type { HorizonRoot } from "../solve/horizon_root.ts";
+import type { DenseStep } from "../solve/engine.ts";
 import { AGAINST_DOUBLE, AGAINST_WIDE, type Comparison } from "./bound.ts";
 import { combine } from "./combine.ts";
 import { enginesOf } from "./engines.ts";
 import { type Frame, inwardFrame, outwardFrame } from "./frame.ts";
 import { endOf, innerEnd } from "./inner_end.ts";
-import { linearHartleHawking, linearHorizonGuess } from "./linear_hartle_hawking.ts";
-import { linearRow } from "./linear_row.ts";
 import { profileOf } from "./profile.ts";
 import type { Bounded, NumericColumn, Profile, RowResult } from "./result.ts";
 import { conversionSlack } from "./slack.ts";
 import type { Solution } from "./solution.ts";
-import { sphericalHartleHawking, sphericalHorizonGuess, sphericalRow } from "./spherical_row.ts";
+import { horizonGuess, solveIn } from "./solve_in.ts";
 import { stateNumbers } from "./state_numbers.ts";
 import { unmet } from "./tolerance.ts";
 import { validity } from "./validity.ts";
@@ -32,25 +29,6 @@ export interface RowOptions {
 }
 
 type Solved<T> = Extract<Solution<T>, { outcome: "solved" }>;
-
-/** Solves a row in one arithmetic. */
-export function solveIn<T>(engine: Engine<T>, input: RowInput, guess?: HorizonRoot): Solution<T> {
-  const linear = engine.model.family === "linear-dilaton";
-  if (input.state === "hartle-hawking") {
-    return linear
-      ? linearHartleHawking(engine, input, guess)
-      : sphericalHartleHawking(engine, input, guess);
-  }
-  return linear ? linearRow(engine, input) : sphericalRow(engine, input);
-}
-
-/** First guess of the horizon where it is to be found from the mass. */
-export function horizonGuess(engine: Engine<number>, input: RowInput): HorizonRoot | undefined {
-  if (input.state !== "hartle-hawking") return undefined;
-  return engine.model.family === "linear-dilaton"
-    ? linearHorizonGuess(engine, input)
-    : sphericalHorizonGuess(engine, input);
-}
 
 const NOTHING = { numbers: {}, evidence: {} } as const;
 const BOUNDARY = "boundary: the bound of the deciding quantity straddles a boundary between kinds";

@@ -7,7 +7,7 @@
 import type { RowInput } from "../model/input.ts";
 import type { Engine } from "../solve/engine.ts";
 import type { NumericColumn } from "./result.ts";
-import { solveIn } from "./row.ts";
+import { solveIn } from "./solve_in.ts";
 import type { Solution } from "./solution.ts";
 
 const PROBE = 2 ** -20; // large against round-off, small against the scale on which locus values vary

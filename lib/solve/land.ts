@@ -6,7 +6,7 @@
 import type { Walker } from "./series/walker.ts";
 
 /** Zero of a continuous f between 0 and h, f(0) and f(h) of opposite sign: bisection guarded secant. */
-function zeroBetween(f: (h: number) => number, h: number): number {
+export function zeroBetween(f: (h: number) => number, h: number): number {
   let [a, fa, b] = [0, f(0), h], fb = f(h);
   for (let i = 0; i < 200; i++) {
     const secant = a - fa * (b - a) / (fb - fa), middle = a + (b - a) / 2;

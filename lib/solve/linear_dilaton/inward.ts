@@ -4,7 +4,7 @@
  * @module
  */
 import type { Engine } from "../engine.ts";
-import { land } from "../land.ts";
+import { land, zeroBetween } from "../land.ts";
 import type { Arithmetic } from "../arithmetic/arithmetic.ts";
 import { type CriticalLocus, followToLocus } from "../naked.ts";
 import { reach, type Walker } from "../series/walker.ts";
@@ -70,8 +70,10 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
     }
     const Ep = x(o.Ep!), F = E - Math.exp(x(walker.time()));
     const falling = T > 0 || F < 0; // E may reach the critical locus
-    const toLocus = Ep > 0 && E < tried &&
-      ((x(o.BS!) < 0.3 && ratio > 1.5) || (T > 0 && E < 0.5) ||
+    // distances in u to the critical locus, (E - Ep)^2/(2 E D), and to a throat, ln(X/|T|)
+    const locusFirst = T >= 0 || (E - Ep) * (E - Ep) < 0.3 * E * D * Math.log(X / -T);
+    const toLocus = Ep > 0 && E - Ep < tried &&
+      ((x(o.BS!) < 0.3 && (ratio > 1.5 || locusFirst)) || (T > 0 && E < 0.5) ||
         (F < 0 && ratio > 1 && E < Math.max(0.5, 4 * Ep)));
     if (toLocus) {
       const start = { phi: o.phi!, rho: o.rho!, chi: o.chi!, sigma: o.sigma! };
@@ -82,7 +84,7 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
         return { end: "locus", lngtt, sigma, Ep: o.Ep!, state: o.state!, steps: steps + end.steps };
       }
       engine.forget(before);
-      tried = 0.8 * E; // the dilaton turned: go on in u and look again later
+      tried = 0.7 * (E - Ep); // the dilaton turned: go on in u and look again later
     }
     const next = ratio > 0.5 ? "outer" : "inner";
     if (next !== form) {
@@ -97,10 +99,24 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
     let h = -Math.min(safe, T < 0 || X > 1e-30 ? 64 : 1e300);
     if (falling && safe > 64) h = -Math.min(-h, reach(walker, "E", E));
     if (falling && Ep > 0) { while (!(walker.series("E", h) >= 0.25 * E)) h /= 2; }
+    const turns = T < 0 && walker.series("gap", h) <= 0;
+    if (turns) h = zeroBetween((s) => walker.series("gap", s), h);
+    // without a critical locus E falls to zero before it could turn, or it turns before
     const zero = Ep === 0 && walker.series("E", h) <= 0;
-    if (zero || (T < 0 && walker.series("gap", h) <= 0)) {
-      land(walker, zero ? "E" : "gap", h, followed, (s) => engine.taken(form, walker, s));
-      return { end: zero ? "zero" : "throat", at: walker.outputs(), steps, walker };
+    if (zero || turns) {
+      const t = walker.time(), state = walker.state(), before = engine.recorded();
+      land(
+        walker,
+        zero ? "E" : "gap",
+        zero ? h : 1.001 * h,
+        followed,
+        (s) => engine.taken(form, walker, s),
+      );
+      const at = walker.outputs();
+      if (zero || x(at.E!) > Ep) return { end: zero ? "zero" : "throat", at, steps, walker };
+      engine.forget(before); // the zero lay beyond the critical locus: go on in smaller steps
+      walker.place(t, state);
+      h = -Math.min(walker.expand(followed), -h) / 4;
     }
     engine.taken(form, walker, h);
     walker.advance(h);

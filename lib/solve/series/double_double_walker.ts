@@ -121,7 +121,8 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
           this.floors[name] ?? 0,
         );
         const one = stepOf(this.#C, r, N, accuracy.tolerance * size);
-        if (!(one >= s)) s = one;
+        if (Number.isNaN(one)) return NaN;
+        if (one < s) s = one;
       }
       return s;
     });

@@ -100,7 +100,8 @@ export class DoubleWalker implements Walker<number> {
         const r = row[name]! * W;
         const size = Math.max(Math.abs(C[r]!), Math.abs(C[r + 1]!), this.floors[name] ?? 0);
         const one = stepOf(C, r, N, accuracy.tolerance * size);
-        if (!(one >= s)) s = one;
+        if (Number.isNaN(one)) return NaN;
+        if (one < s) s = one;
       }
       return s;
     });

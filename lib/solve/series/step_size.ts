@@ -45,23 +45,25 @@ export function adapted(
   unit: number,
   expandedStep: (unit: number) => number,
 ): { readonly unit: number; readonly step: number } {
-  let longest = 0; // unit in which the series looked like a polynomial
-  for (let tries = 0; tries < 40; tries++) {
+  let long = 0, short = Infinity; // units that proved too small (the tail underflows) and too large
+  for (let tries = 0; tries < 80; tries++) {
     const s = expandedStep(unit);
     if (s >= 1 / 64 && s <= 64) return { unit, step: s * unit };
-    if (s === Infinity && (longest || unit > 1e200)) return { unit, step: Infinity };
-    if (Number.isNaN(s) && longest) {
-      expandedStep(longest);
-      return { unit: longest, step: longest };
+    if (s === Infinity) {
+      if (unit > 1e270) return { unit, step: Infinity };
+      long = unit;
+    } else if (Number.isNaN(s) || s === 0) {
+      if (unit < 1e-270) return { unit, step: NaN };
+      short = unit;
     }
-    if (s === Infinity) longest = unit;
-    const next = Number.isNaN(s) || s === 0
-      ? unit * 2 ** -20
-      : s === Infinity
-      ? unit * 2 ** 40
-      : powerOfTwoBelow(s * unit);
-    if (!(next > 1e-280)) break;
-    unit = next;
+    if (s > 0 && s < Infinity) unit = powerOfTwoBelow(s * unit);
+    else if (long > 0 && short < Infinity) {
+      if (short <= 4 * long) {
+        const again = expandedStep(long); // the tail is zero here and overflows at four times the unit
+        return { unit: long, step: again === Infinity ? long : NaN };
+      }
+      unit = powerOfTwoBelow(Math.sqrt(long) * Math.sqrt(short));
+    } else unit *= s === Infinity ? 2 ** 20 : 2 ** -20;
   }
   return { unit, step: NaN };
 }
