@@ -40,7 +40,7 @@ function list(paths: readonly string[]): string {
 }
 
 /**
- * Runs a module of this folder to its end. Signals that stop a command are passed on.
+ * Runs a module of this folder to its end.
  *
  * @param module File name.
  * @param grant What it may do.
@@ -51,8 +51,18 @@ export async function launch(module: string, grant: Grant, request: unknown): Pr
   const flags = ["--no-prompt", `--allow-read=${list([ROOT, ...grant.read])}`];
   if (grant.write.length > 0) flags.push(`--allow-write=${list(grant.write)}`);
   if (grant.sys) flags.push(`--allow-sys=${grant.sys.join(",")}`);
+  return await runDeno([...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)]);
+}
+
+/**
+ * Runs `deno run` to its end. Signals that stop a command are passed on.
+ *
+ * @param args Permissions, module, arguments.
+ * @returns Its exit status; 3 if it was killed.
+ */
+export async function runDeno(args: readonly string[]): Promise<number> {
   const child = new Deno.Command("deno", {
-    args: ["run", ...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)],
+    args: ["run", ...args],
     stdin: "null",
     stdout: "inherit",
     stderr: "inherit",

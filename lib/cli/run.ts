@@ -3,10 +3,10 @@
  *
  * @module
  */
-import { launch } from "./launch.ts";
+import { launch, programPath, runDeno } from "./launch.ts";
 import { helpText, parseOptions } from "./options.ts";
 import { RUN_OPTIONS, type RunRequest, runRequest } from "./run_options.ts";
-import { closing } from "./status.ts";
+import { closing, STATUS } from "./status.ts";
 
 const PURPOSE = "Solves every row of a parameter table; run again, it completes what is missing.";
 
@@ -16,7 +16,23 @@ async function main(args: readonly string[]): Promise<number> {
     console.log(helpText("run", PURPOSE, RUN_OPTIONS));
     return 0;
   }
-  return await solveTable(runRequest(values, args));
+  const request = runRequest(values, args);
+  const status = await solveTable(request);
+  if (values.has("table") || status > STATUS.failed) return status;
+  return Math.max(status, await executeSurvey(request.out));
+}
+
+/** The survey of the demo is part of what the command makes without arguments. */
+async function executeSurvey(out: string): Promise<number> {
+  const permissions = [
+    "--allow-run",
+    "--allow-read",
+    "--allow-write",
+    "--allow-net=127.0.0.1",
+    "--allow-env=INIT_CWD",
+  ];
+  const paths = [programPath("lib/cli/execute.ts"), programPath("notebooks/survey.ipynb")];
+  return await runDeno(["--no-prompt", ...permissions, ...paths, "--run", out]);
 }
 
 /**
