@@ -56,8 +56,11 @@ export function adapted(
       if (unit < 1e-270) return { unit, step: NaN };
       short = unit;
     }
-    if (s > 0 && s < Infinity) unit = powerOfTwoBelow(s * unit);
-    else if (long > 0 && short < Infinity) {
+    if (s > 0 && s < Infinity) {
+      const next = powerOfTwoBelow(s * unit);
+      if (next >= short) return { unit, step: s * unit }; // coefficients are in range here, not there
+      unit = next;
+    } else if (long > 0 && short < Infinity) {
       if (short <= 4 * long) {
         const again = expandedStep(long); // the tail is zero here and overflows at four times the unit
         return { unit: long, step: again === Infinity ? long : NaN };
