@@ -20,13 +20,11 @@ import type { Bounded } from "../observe/result.ts";
 export function boundedText({ value, error = 0 }: Bounded): string {
   if (!Number.isFinite(value)) return value > 0 ? "diverges to +∞" : "diverges to -∞";
   if (error === 0) return String(value);
-  const bound = error.toPrecision(2).replace(/^0\.0*([1-9])(\d)$/, () => exponential(error));
+  const bound = error < 0.01 ? error.toExponential(1) : error.toPrecision(2);
   const digits = Math.floor(Math.log10(Math.abs(value) || error)) - Math.floor(Math.log10(error));
-  // two digits of the bound; a double has 17 at most
-  const text = value === 0 ? "0" : value.toPrecision(Math.min(17, Math.max(2, digits + 2)));
+  // two digits of the bound; with 17 or more the shortest text that reads back to the double says it all
+  const text = value === 0 || digits + 2 >= 17
+    ? String(value)
+    : value.toPrecision(Math.max(2, digits + 2));
   return `${text} ± ${bound}`;
-}
-
-function exponential(error: number): string {
-  return error.toExponential(1);
 }

@@ -1,18 +1,34 @@
 /**
- * Results shown: figures, solutions by hand, finished runs in notebooks.
+ * Results shown: solutions by hand, finished runs in notebooks, and the notebooks themselves.
  *
  * @module
  */
-export * from "./bounded_text.ts";
-export * from "./notebook/display.ts";
+export { boundedText } from "./bounded_text.ts";
+export { DISPLAY, DISPLAY_LIMIT, type Displayable, displayable } from "./notebook/display.ts";
 export * from "./notebook/document.ts";
 export * from "./notebook/kernelspec.ts";
-export * from "./notebook/progress.ts";
-export * from "./notebook/stray_errors.ts";
-export * from "./run_reader.ts";
+export { withProgress } from "./notebook/progress.ts";
+export { reportStrayErrors } from "./notebook/stray_errors.ts";
+export { numberOf, readRun, type Run } from "./run_reader.ts";
 export * from "./run_tables.ts";
-export * from "./small_profile.ts";
 export * from "./solution.ts";
-export * from "./solve.ts";
-export * from "./solve_options.ts";
-export * from "./table_bundle.ts";
+export { solve } from "./solve.ts";
+export {
+  type AboveOption,
+  type Absent,
+  type BathOptions,
+  type Either,
+  type FamilyOptions,
+  type HorizonOption,
+  type LinearDilatonOptions,
+  type MassOption,
+  type MatterOptions,
+  OptionsError,
+  type ScaleOption,
+  type SolveOptions,
+  type StateOptions,
+  type SWaveOptions,
+  type ToleranceOption,
+  type WallOption,
+} from "./solve_options.ts";
+export type { ResultCells } from "../batch/result_row.ts";

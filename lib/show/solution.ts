@@ -74,7 +74,11 @@ export class Solution implements Displayable {
   readonly stamp: string;
   readonly #profile: Profile | undefined;
 
-  /** @param parts input, result, stamp, profile */
+  /**
+   * Puts a solution together.
+   *
+   * @param parts input, result, stamp, profile
+   */
   constructor({ input, result, stamp, profile }: SolutionParts) {
     this.input = input;
     this.outcome = result.outcome;
@@ -88,6 +92,8 @@ export class Solution implements Displayable {
   }
 
   /**
+   * The profile.
+   *
    * @returns equally long columns from outside inwards, or undefined where there is no profile (refused,
    * failed)
    */
@@ -95,7 +101,11 @@ export class Solution implements Displayable {
     return this.#profile;
   }
 
-  /** @returns the numbers with titles and units, in the order of the results table; shows as a table */
+  /**
+   * The numbers with titles and units, in the order of the results table.
+   *
+   * @returns a list that shows itself as a table
+   */
   observables(): readonly Observable[] & Displayable {
     const list = NUMERIC_COLUMNS.flatMap((name): Observable[] => {
       const number = this.numbers[name];
@@ -107,7 +117,11 @@ export class Solution implements Displayable {
     return Object.assign(list, displayable(tableBundle(["Quantity", "Value", "Unit"], rows)));
   }
 
-  /** @returns the figures that this solution has: its profile, or none; shows them all */
+  /**
+   * The figures of this solution: its profile, or none.
+   *
+   * @returns a list that shows them all
+   */
   figures(): readonly Figure[] & Displayable {
     const title = `${this.input.model}, ${this.input.state}`;
     const svg = this.#profile === undefined ? undefined : this.#figure(title, this.#profile);
@@ -121,7 +135,11 @@ export class Solution implements Displayable {
     return Object.assign(list, displayable(all));
   }
 
-  /** @returns card as HTML and as plain text */
+  /**
+   * The card.
+   *
+   * @returns HTML and plain text
+   */
   [DISPLAY](): MimeBundle {
     const { model, state } = this.input;
     const head = `${model}, ${state}: ${this.kind ?? this.outcome}`;

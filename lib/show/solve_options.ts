@@ -9,61 +9,63 @@ import { type Fault, quoted } from "../batch/fault.ts";
 import { nearest } from "../batch/nearest.ts";
 import { readRow, type TableRow } from "../batch/row_reader.ts";
 
-type Absent<T> = { readonly [K in keyof T]?: never };
+/** None of the options of a group. */
+export type Absent<T> = { readonly [K in keyof T]?: never };
 /** One of two groups of options and none of the other. */
 export type Either<A, B> = (A & Absent<B>) | (B & Absent<A>);
 
 /** kappa = N/12, or the number N of conformal scalars. */
-export type Matter = Either<{ readonly kappa: number }, { readonly nScalars: number }>;
+export type MatterOptions = Either<{ readonly kappa: number }, { readonly nScalars: number }>;
 /** Bath temperature over the natural one, or its difference from 1. */
-export type Bath = Either<
+export type BathOptions = Either<
   { readonly bathRatio: number },
   { readonly bathRatioMinusOne: number }
 >;
+/** Mass M, see the conventions page. */
+export type MassOption = { readonly mass: number };
+/** m minus its critical value, m = M/lambda. */
+export type AboveOption = { readonly massAboveCritical: number };
+/** Dilaton at the horizon; swave: horizon radius. */
+export type HorizonOption = { readonly horizonDilaton: number };
+/** Areal radius of the cavity wall. */
+export type WallOption = { readonly wallRadius: number };
+/** Scale of the linear dilaton. @default 1 */
+export type ScaleOption = { readonly lambda?: number };
+/** Relative tolerance on the locus columns. @default 1e-10 */
+export type ToleranceOption = { readonly tolerance?: number };
 
-interface Mass {
-  /** Mass M, see the conventions page. */
-  readonly mass: number;
-}
-interface Above {
-  /** m minus its critical value, m = M/lambda. */
-  readonly massAboveCritical: number;
-}
-interface Horizon {
-  /** Dilaton at the horizon; swave: horizon radius. */
-  readonly horizonDilaton: number;
-}
-interface Wall {
-  /** Areal radius of the cavity wall. */
-  readonly wallRadius: number;
-}
-interface Scale {
-  /** Scale of the linear dilaton. @default 1 */
-  readonly lambda?: number;
-}
-
-type Linear =
-  | { readonly model: "cghs" } & ByState<Mass, Either<Mass, Horizon>>
-  | { readonly model: "rst" | "bpp" } & Family
-  | { readonly model: "solvable"; /** Family parameter in [0, 2]. */ readonly a: number } & Family;
-type Family = ByState<
-  Either<Mass, Above>,
-  Either<Mass, Above> & Absent<Horizon> | Horizon & Absent<Mass & Above>
->;
-type ByState<Any, Regular> =
+/** State with what fixes the solution in it: `Regular` in the state with a regular horizon. */
+export type StateOptions<Any, Regular> =
   | { readonly state: "boulware" } & Any
-  | { readonly state: "thermal" } & Any & Bath
+  | { readonly state: "thermal" } & Any & BathOptions
   | { readonly state: "hartle-hawking" } & Regular;
-type SWave =
-  | { readonly state: "boulware" } & Mass
-  | { readonly state: "thermal" } & Mass & Bath & Wall
-  | { readonly state: "hartle-hawking" } & Either<Mass, Horizon> & Wall;
+/** The states of the solvable family. */
+export type FamilyOptions = StateOptions<
+  Either<MassOption, AboveOption>,
+  Either<Either<MassOption, AboveOption>, HorizonOption>
+>;
+/** Models with a linear-dilaton far region; `a` in [0, 2] is the family parameter. */
+export type LinearDilatonOptions =
+  & ScaleOption
+  & (
+    | { readonly model: "cghs" } & StateOptions<MassOption, Either<MassOption, HorizonOption>>
+    | { readonly model: "rst" | "bpp" } & FamilyOptions
+    | { readonly model: "solvable"; readonly a: number } & FamilyOptions
+  );
+/** Spherically reduced Einstein gravity, G = 1. */
+export type SWaveOptions =
+  & { readonly model: "swave" }
+  & (
+    | { readonly state: "boulware" } & MassOption
+    | { readonly state: "thermal" } & MassOption & BathOptions & WallOption
+    | { readonly state: "hartle-hawking" } & Either<MassOption, HorizonOption> & WallOption
+  );
 
 /** What a single solution is asked for: the columns of a parameter table in camel case. */
 export type SolveOptions =
-  & Matter
-  & { /** Relative tolerance on the locus columns. @default 1e-10 */ readonly tolerance?: number }
-  & ((Linear & Scale) | ({ readonly model: "swave" } & SWave));
+  & MatterOptions
+  & ToleranceOption
+  & (LinearDilatonOptions | SWaveOptions);
 
 const camel = (column: string): string => column.replace(/_([a-z])/g, (_, c) => c.toUpperCase());
 const COLUMN_OF = new Map(
@@ -71,12 +73,15 @@ const COLUMN_OF = new Map(
 );
 /** Option names in a sentence that speaks of columns. */
 const inOptions = (text: string): string =>
-  [...COLUMN_OF].reduce((t, [name, column]) => t.replaceAll(column, name), text)
-    .replaceAll("must be empty", "must be absent");
+  text.replace(/[a-z]+(?:_[a-z]+)+/g, camel).replaceAll("must be empty", "must be absent");
 
 /** Options that cannot be solved; nothing was run. */
 export class OptionsError extends RangeError {
-  /** @param faults every fault, one line each */
+  /**
+   * Makes the error.
+   *
+   * @param faults every fault, one line each
+   */
   constructor(faults: readonly string[]) {
     const count = `${faults.length} fault${faults.length === 1 ? "" : "s"}`;
     super(`Cannot solve as the options have ${count}:\n${faults.join("\n")}`);

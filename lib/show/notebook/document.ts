@@ -112,6 +112,8 @@ export function notebookText(notebook: Notebook): string {
 }
 
 /**
+ * Text of a cell or an output in one piece.
+ *
  * @param text text, whole or by lines
  * @returns the whole text
  */

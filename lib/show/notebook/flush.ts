@@ -11,7 +11,13 @@ import type { Message } from "./message.ts";
 /** Media type of the token; no page shows it. */
 const TOKEN_TYPE = "application/x-flush";
 
-/** Requests code that leaves no trace in the history and in the count of executions. */
+/**
+ * Runs code that leaves no trace in the history and in the count of executions.
+ *
+ * @param kernel kernel
+ * @param code TypeScript
+ * @returns the kernel's reply
+ */
 export function silentRequest(kernel: Kernel, code: string): Promise<Message> {
   return kernel.request("execute_request", {
     code,
@@ -29,6 +35,8 @@ export class Flusher {
   #arrived: () => void = () => {};
 
   /**
+   * Looks for the token.
+   *
    * @param message published message
    * @returns whether it is a token and so no output
    */

@@ -193,6 +193,8 @@ async function connectWhenUp(
 }
 
 /**
+ * Text of a connection file.
+ *
  * @param ports ports in the order shell, control, iopub, stdin, heartbeat
  * @param key secret that signs the messages
  * @returns contents of a Jupyter connection file

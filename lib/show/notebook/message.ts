@@ -33,6 +33,8 @@ export class Codec {
   }
 
   /**
+   * Makes a codec.
+   *
    * @param key the secret of the connection file
    * @returns a codec with a fresh session identifier
    */
@@ -45,6 +47,8 @@ export class Codec {
   }
 
   /**
+   * Encodes and signs a message.
+   *
    * @param type message type
    * @param content body
    * @returns the frames to send and the identifier of the message
@@ -72,6 +76,8 @@ export class Codec {
   }
 
   /**
+   * Checks and decodes a message.
+   *
    * @param frames frames of one received message
    * @returns the message, or `null` if it is malformed or its signature is wrong
    */
