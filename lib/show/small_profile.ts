@@ -12,7 +12,9 @@ const MARGIN = 4;
 /** Points drawn at most. */
 const POINTS = 200;
 /** The far region, where -g_tt is this near to 1, is cut off: it may be thousands of times as long. */
-const FAR = 0.98;
+const FAR = 0.9;
+/** Decades of -g_tt that are drawn outside a horizon. */
+const DECADES = 6;
 
 /**
  * Draws the small profile.
@@ -42,8 +44,12 @@ function chosen(profile: Profile): Array<readonly [number, number]> {
   const all = [...profile.proper_distance].map((x, i) =>
     [x, Math.log10(profile.minus_gtt[i])] as const
   ).filter(([x, y]) => Number.isFinite(x) && Number.isFinite(y));
-  const near = all.findIndex(([, y]) => y < Math.log10(FAR));
-  const drawn = near < 0 ? all : all.slice(Math.max(0, near - 1));
+  const near = Math.max(0, all.findIndex(([, y]) => y < Math.log10(FAR)) - 1);
+  // behind a locus as many decades are followed as lie outside it; a horizon lies infinitely deep
+  const locus = all.find(([x]) => x === 0)?.[1];
+  const floor = locus === undefined ? -DECADES : 2 * locus;
+  const deep = all.findIndex(([, y]) => y < floor);
+  const drawn = all.slice(near, deep < 0 ? undefined : deep);
   const step = Math.ceil(drawn.length / POINTS);
   return drawn.filter((_, i) => i % step === 0 || i === drawn.length - 1);
 }

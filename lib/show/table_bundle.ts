@@ -17,9 +17,7 @@ export function tableBundle(
   rows: readonly (readonly string[])[],
 ): { "text/html": string; "text/plain": string } {
   const line = (cells: readonly string[], tag: string): string =>
-    `<tr>${
-      cells.map((cell) => `<${tag} style="text-align:left">${escapeXml(cell)}</${tag}>`).join("")
-    }</tr>`;
+    `<tr>${cells.map((cell) => element(cell, tag)).join("")}</tr>`;
   const head = header.length === 0 ? "" : `<thead>${line(header, "th")}</thead>`;
   const all = header.length === 0 ? rows : [header, ...rows];
   const widths = (all[0] ?? []).map((_, i) => Math.max(...all.map((row) => row[i].length)));
@@ -30,4 +28,10 @@ export function tableBundle(
     }</tbody></table>`,
     "text/plain": plain.join("\n"),
   };
+}
+
+/** A number must not be parted from its bound; prose may be wrapped. */
+function element(cell: string, tag: string): string {
+  const wrap = cell.length > 50 ? "" : ";white-space:nowrap";
+  return `<${tag} style="text-align:left${wrap}">${escapeXml(cell)}</${tag}>`;
 }

@@ -6,26 +6,26 @@
  * @module
  */
 
-const [connectionFile] = Deno.args;
-const kernel = new Deno.Command(Deno.execPath(), {
-  args: ["jupyter", "--kernel", "--conn", connectionFile],
-  stdin: "null",
-}).spawn();
-
-// Ctrl-C reaches the whole process group; the command decides what becomes of the kernel
-Deno.addSignalListener("SIGINT", () => {});
-if (Deno.build.os !== "windows") Deno.addSignalListener("SIGTERM", kill);
-
-function kill(): void {
-  try {
-    kernel.kill("SIGKILL");
-  } catch {
-    // it has ended already
-  }
+async function keep(connectionFile: string): Promise<number> {
+  const kernel = new Deno.Command(Deno.execPath(), {
+    args: ["jupyter", "--kernel", "--conn", connectionFile],
+    stdin: "null",
+  }).spawn();
+  const kill = (): void => {
+    try {
+      kernel.kill("SIGKILL");
+    } catch {
+      // it has ended already
+    }
+  };
+  // Ctrl-C reaches the whole process group; the command decides what becomes of the kernel
+  Deno.addSignalListener("SIGINT", () => {});
+  if (Deno.build.os !== "windows") Deno.addSignalListener("SIGTERM", kill);
+  const drain = async (): Promise<void> => {
+    for await (const _ of Deno.stdin.readable);
+  };
+  drain().then(kill, kill);
+  return (await kernel.status).code;
 }
 
-(async () => {
-  for await (const _ of Deno.stdin.readable);
-  kill();
-})();
-Deno.exit((await kernel.status).code);
+if (import.meta.main) Deno.exit(await keep(Deno.args[0]));
