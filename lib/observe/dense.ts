@@ -15,8 +15,10 @@ export interface Point {
   readonly ddphi: number;
   readonly drho: number;
   readonly ddrho: number;
-  /** c^2/4 - rho'^2 without cancellation. */
-  readonly flux: number;
+  /** c^2/4 - rho'^2 without cancellation, where the form has it. */
+  readonly flux?: number;
+  /** R of the two-dimensional metric, where the form has it without differentiation. */
+  readonly curvature?: number;
   /** e^rho |d sigma/dt|: proper distance per unit of the step's variable. */
   readonly stretch: number;
 }
@@ -44,7 +46,8 @@ export function pointAt(step: DenseStep, x: number): Point {
     ddphi: (phi2 - phi1 / s1 * s2) / (s1 * s1),
     drho: rho1 / s1,
     ddrho: (rho2 - rho1 / s1 * s2) / (s1 * s1),
-    flux: jet(step, "flux", x)[0],
+    ...("flux" in step.code.row ? { flux: jet(step, "flux", x)[0] } : {}),
+    ...("curvature" in step.code.row ? { curvature: jet(step, "curvature", x)[0] } : {}),
     stretch: jet(step, "erho", x)[0] * Math.abs(s1),
   };
 }

@@ -14,6 +14,8 @@ import { unitOf } from "./spherical_row.ts";
 export interface Frame {
   /** kappa in solver units. */
   readonly kappa: number;
+  /** c^2/4 in solver units. */
+  readonly quarterC2: number;
   readonly sigma: (sigma: number) => number;
   readonly dilaton: (phi: number) => number;
   /** Added to rho. */
@@ -33,10 +35,12 @@ function linear(
   u: (solver: number) => number,
   rho: number,
   inner: number,
+  tau: number,
 ): Frame {
   const ln = Math.log(M0);
   return {
     kappa,
+    quarterC2: tau * tau, // c = 2 lambda tau
     sigma: (s) => (u(2 * s) + ln) / (2 * lambda),
     dilaton: (phi) => phi - ln / 2,
     rho,
@@ -46,9 +50,16 @@ function linear(
   };
 }
 
-function spherical(kappa: number, L: number, lnRedshift: number, inner: number): Frame {
+function spherical(
+  kappa: number,
+  L: number,
+  lnRedshift: number,
+  inner: number,
+  halfC: number,
+): Frame {
   return {
     kappa,
+    quarterC2: halfC * halfC,
     sigma: (s) => s * L * Math.exp(lnRedshift / 2),
     dilaton: (r) => r * L,
     rho: -lnRedshift / 2,
@@ -64,13 +75,16 @@ export function inwardFrame(engine: Engine<number>, input: RowInput): Frame {
     const eps = input.state === "boulware" ? 1 : -input.bathRatioMinusOne!;
     const { m } = massParameter(engine, input, linearConstants(engine, input, eps));
     const M0 = Math.max(Math.abs(m), input.kappa);
-    return linear(input.kappa / M0, M0, input.lambda!, (u) => u, 0, 0);
+    return linear(input.kappa / M0, M0, input.lambda!, (u) => u, 0, 0, 1 - eps);
   }
   const L = unitOf(input.kappa, input.mass!);
   const redshift = input.wallRadius === undefined
     ? 0
     : Math.log1p(-2 * input.mass! / input.wallRadius);
-  return spherical(input.kappa / (L * L), L, redshift, 0);
+  const halfC = input.wallRadius === undefined
+    ? 0
+    : (1 + input.bathRatioMinusOne!) / (4 * input.mass! / L);
+  return spherical(input.kappa / (L * L), L, redshift, 0, halfC);
 }
 
 /**
@@ -98,6 +112,7 @@ export function outwardFrame(
       (u) => far.uFar + (u - far.uRun) / alpha,
       Math.log1p(far.excess),
       inner,
+      1,
     );
   }
   const L = unitOf(input.kappa, horizon), kappa = input.kappa / (L * L), rh = horizon / L;
@@ -107,5 +122,5 @@ export function outwardFrame(
     rw: input.wallRadius! / L,
     kappa,
   });
-  return far && spherical(kappa, L, far.lngWall, Math.exp(far.rhoStart) * 2 * rh);
+  return far && spherical(kappa, L, far.lngWall, Math.exp(far.rhoStart) * 2 * rh, 1 / (2 * rh));
 }

@@ -7,7 +7,7 @@ import type { RowInput } from "../model/input.ts";
 import type { DenseStep, Engine } from "../solve/engine.ts";
 import type { Walker } from "../solve/series/walker.ts";
 import { SETTINGS } from "../solve/settings.ts";
-import { pointAt, properDistance } from "./dense.ts";
+import { properDistance } from "./dense.ts";
 import { linearRow } from "./linear_row.ts";
 import type { InnerEnd, Kind } from "./result.ts";
 import { sphericalRow } from "./spherical_row.ts";
@@ -23,49 +23,51 @@ export function denseRun(
   } else sphericalRow(engine, input, (end) => end.end === "throat" && behind(end.walker, end.form));
 }
 
-/** Goes on inwards until -g_tt has fallen by SETTINGS.behind e-folds; false if it cannot. */
+/** Where a step behind a throat ended. */
+interface Mark {
+  readonly rho: number;
+  /** ln|R|. */
+  readonly lnR: number;
+}
+
+/** Goes on inwards and marks every step; undefined if it cannot. */
 export function followBehind(
   engine: Engine<number>,
   walker: Walker<number>,
   form: string,
-): boolean {
-  const stop = walker.outputs()["lngtt"]! - SETTINGS.behind;
+): readonly Mark[] | undefined {
+  // |R| begins to grow only where -g_tt is below its square at the throat
+  const start = walker.outputs()["lngtt"]!, stop = start - SETTINGS.behind - Math.abs(start);
+  const marks: Mark[] = [];
   for (let steps = 0; steps < SETTINGS.steps; steps++) {
-    const lngtt = walker.outputs()["lngtt"]!;
-    if (!Number.isFinite(lngtt)) return false;
-    if (lngtt <= stop) return true;
-    const safe = walker.expand(["lngtt"]);
-    if (!(safe > 0)) return false;
+    const o = walker.outputs(), lngtt = o["lngtt"]!;
+    if (!Number.isFinite(lngtt)) return undefined;
+    marks.push({ rho: lngtt / 2, lnR: Math.log(Math.abs(o["curvature"]!)) });
+    if (lngtt <= stop) return marks;
+    const safe = walker.expand(["lngtt", form === "inner" ? "X" : "g"]);
+    if (!(safe > 0)) return undefined;
     const left = 1.01 * (lngtt - stop) / walker.slope("lngtt");
     const h = -(left > 0 ? Math.min(safe, left) : safe);
     engine.taken(form, walker, h);
     walker.advance(h);
   }
-  return false;
-}
-
-/** ln|R| + constant and rho at the inner edge of a step. */
-function edge(
-  step: DenseStep,
-): { readonly rho: number; readonly lnR: number; readonly sign: number } {
-  const { rho, ddrho } = pointAt(step, step.h);
-  return { rho, lnR: Math.log(Math.abs(2 * ddrho)) - 2 * rho, sign: -Math.sign(ddrho) };
+  return undefined;
 }
 
 /**
- * Identifies the end behind a throat from the recorded steps: -g_tt falls exponentially in sigma (the end is
- * null), proper distance converges, and |R| grows like a power of 1/(-g_tt): a null singularity. If |R|
- * tends to a constant while the distance grows, another asymptotic region.
+ * Identifies the end behind a throat: -g_tt falls exponentially in sigma (the end is null), proper distance
+ * converges, and |R| grows like a power of 1/(-g_tt): a null singularity. If |R| tends to a constant while
+ * the distance grows, another asymptotic region.
  */
-export function classifyBehind(steps: readonly DenseStep[]): InnerEnd {
+export function classifyBehind(steps: readonly DenseStep[], marks: readonly Mark[]): InnerEnd {
   if (steps.length < 3) return "undecided";
   const lengths = steps.map((s) => properDistance(s, 0, s.h)),
     total = lengths.reduce((a, b) => a + b, 0);
-  const last = edge(steps[steps.length - 1]!);
-  let i = steps.length - 1;
-  while (i > 0 && edge(steps[i]!).rho < last.rho + SETTINGS.behind / 6) i--;
-  const before = edge(steps[i]!), tail = lengths.slice(i + 1).reduce((a, b) => a + b, 0);
-  const slope = (last.lnR - before.lnR) / (last.rho - before.rho); // d ln|R| / d rho
+  const last = marks[marks.length - 1]!;
+  let i = marks.length - 1;
+  while (i > 0 && marks[i]!.rho < last.rho + SETTINGS.behind / 6) i--;
+  const tail = lengths.slice(i).reduce((a, b) => a + b, 0);
+  const slope = (last.lnR - marks[i]!.lnR) / (last.rho - marks[i]!.rho); // d ln|R| / d rho
   if (tail < 1e-3 * total && slope < -1) return "null-singularity";
   if (tail > 0.1 * total && Math.abs(slope) < 0.1) return "asymptotic-region";
   return "undecided";
@@ -91,7 +93,8 @@ export function innerEnd(
   ) {
     denseRun(engine, input, (walker, form) => {
       locusStep = record.length;
-      if (followBehind(engine, walker, form)) end = classifyBehind(record.slice(locusStep));
+      const marks = followBehind(engine, walker, form);
+      if (marks) end = classifyBehind(record.slice(locusStep), marks);
     });
     if (kind !== "throat") locusStep = record.length;
   }

@@ -18,9 +18,12 @@ import { type Profile, PROFILE_COLUMNS } from "./result.ts";
 
 const POINTS = 8; // points of a step
 
-/** Residual of an equation relative to its largest term. */
-function relative(terms: readonly number[]): number {
-  const size = Math.max(...terms.map(Math.abs));
+/**
+ * Residual of an equation relative to its largest term; second derivatives count at least as much as
+ * `natural`, the product of first ones, below which their own round-off shows.
+ */
+function relative(terms: readonly number[], natural: number): number {
+  const size = Math.max(...terms.map(Math.abs), Math.abs(natural));
   return size === 0 ? 0 : terms.reduce((a, b) => a + b, 0) / size;
 }
 
@@ -54,6 +57,7 @@ export function profileOf(
     if (i === locusStep && !outward) atLocus = length;
     for (let j = 0; j <= POINTS; j++) {
       const x = step.h * j / POINTS;
+      if (step.form === "root" && step.t + x === 0) continue; // the locus itself: sigma has no slope in y
       if (j > 0) length += properDistance(step, step.h * (j - 1) / POINTS, x);
       if (j === POINTS && i < record.length - 1) continue; // the next step begins there
       const p = pointAt(step, x);
@@ -66,19 +70,27 @@ export function profileOf(
         number,
         number,
       ];
-      const g = Math.exp(2 * p.rho), { kappa } = frame;
+      const g = Math.exp(2 * p.rho), { kappa } = frame, R = p.curvature ?? -2 * p.ddrho / g;
+      const flux = p.flux ?? frame.quarterC2 - p.drho * p.drho,
+        density = input.kappa / (2 * Math.PI) * frame.curvature;
       const row = [
         frame.sigma(p.sigma),
         0,
         frame.dilaton(p.phi),
         p.rho + frame.rho,
         Math.exp(2 * (p.rho + frame.rho)),
-        -2 * p.ddrho / g * frame.curvature,
-        input.kappa / (2 * Math.PI) * (p.flux + 2 * p.ddrho) / g * frame.curvature,
-        input.kappa / (2 * Math.PI) * p.flux / g * frame.curvature,
-        relative([Hpp * p.dphi * p.dphi, Hp * p.ddphi, kappa * p.ddrho, -g * V]),
-        relative([2 * K * p.ddphi, 2 * Hp * p.ddrho, -g * Vp, Kp * p.dphi * p.dphi]),
-        relative([2 * p.drho * Hp * p.dphi, K * p.dphi * p.dphi, -g * V, -kappa * p.flux]),
+        R * frame.curvature,
+        density * (flux / g - R),
+        density * flux / g,
+        relative(
+          [Hpp * p.dphi * p.dphi, Hp * p.ddphi, kappa * p.ddrho, -g * V],
+          Hp * p.dphi * p.drho,
+        ),
+        relative(
+          [2 * K * p.ddphi, 2 * Hp * p.ddrho, -g * Vp, Kp * p.dphi * p.dphi],
+          2 * K * p.dphi * p.drho,
+        ),
+        relative([2 * p.drho * Hp * p.dphi, K * p.dphi * p.dphi, -g * V, -kappa * flux], 0),
       ];
       if (row.every(Number.isFinite)) {
         rows.push(row);

@@ -32,6 +32,8 @@ export interface DenseStep {
 export interface Engine<T> {
   readonly model: CompiledModel;
   readonly arithmetic: Arithmetic<T>;
+  /** Whether steps are recorded for dense output. */
+  readonly dense: boolean;
   /** Terms of the start series. */
   readonly startTerms: number;
   /** Walker over a form; floors are sizes below which an unknown needs no relative accuracy. */
@@ -60,16 +62,20 @@ function kept<K, V>(make: (key: K) => V): (key: K) => V {
   };
 }
 
-/** Names of the dense outputs of every form. */
-export const DENSE = ["phi", "rho", "sigma", "erho", "flux"] as const;
+/** Dense outputs, where a form has them. */
+const DENSE = ["phi", "rho", "sigma", "erho", "flux", "curvature"];
 
 /** Double-precision engine factory of a model; `record` receives dense steps. */
 export function doubleEngine(model: CompiledModel): (record?: DenseStep[]) => Engine<number> {
   const light = kept((form: string) => doubleCode(model.programs[form]!, SETTINGS.double));
-  const dense = kept((form: string) => doubleCode(model.programs[form]!, SETTINGS.double, DENSE));
+  const dense = kept((form: string) => {
+    const program = model.programs[form]!;
+    return doubleCode(program, SETTINGS.double, DENSE.filter((n) => n in program.outputs));
+  });
   return (record) => ({
     model,
     arithmetic: double,
+    dense: record !== undefined,
     startTerms: SETTINGS.double.start,
     walker: (form, p, floors, unit) =>
       new DoubleWalker((record ? dense : light)(form), p, floors, unit),
@@ -94,6 +100,7 @@ export function doubleDoubleEngine(
   return {
     model,
     arithmetic: doubleDouble,
+    dense: false,
     startTerms: settings.start,
     walker: (form, p, floors, unit) => new DoubleDoubleWalker(code(form), p, floors, unit),
     taken: () => {},

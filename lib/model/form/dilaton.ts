@@ -32,7 +32,6 @@ const COMMON: SystemText["let"] = [
   ["sigma_phi", "e*t*sqrt(chi*(2+kc)/Y)"],
   ["lngtt", "2*rho"],
   ["erho", "exp(rho)"],
-  ["flux", "c4/kappa-(slope/sigma_phi)^2"], // c^2/4 - rho'^2
 ];
 
 /** The system in phi. */
@@ -44,7 +43,7 @@ export function inDilaton(parameters: readonly string[]): SystemText {
     let: [["t", "sqrt(H_phi^2-kappa*K)"], ...COMMON],
     derivative: { rho: "slope", chi: "chi_phi", sigma: "sigma_phi" },
     series: [],
-    outputs: ["phi", "rho", "chi", "sigma", "lngtt", "erho", "flux"],
+    outputs: ["phi", "rho", "chi", "sigma", "lngtt", "erho"],
   };
 }
 
@@ -77,6 +76,6 @@ export function inRoot(
       ],
     derivative: { rho: "slope*phi_y", chi: "chi_phi*phi_y", sigma: "sigma_phi*phi_y" },
     series: [],
-    outputs: ["phi", "rho", "chi", "sigma", "lngtt", "erho", "flux"],
+    outputs: ["phi", "rho", "chi", "sigma", "lngtt", "erho"],
   };
 }

@@ -82,7 +82,7 @@ export function linearDilaton(
       ["flux", "-4*((eps/2+v)*(1-eps/2+v)+(1+2*v)*phiu+phiu^2)"], // c^2/4 - rho'^2
     ],
     derivative: { F: "Fu", w: "v", v: "vu" },
-    series: ["E", "T", "D", "gap", "lngtt"],
+    series: ["E", "T", "D", "gap", "lngtt", "X"],
     outputs: [
       "E",
       "D",

@@ -62,7 +62,7 @@ export function spherical(surroundings: Surroundings): SystemText {
       ["flux", "tb"], // c^2/4 - rho'^2
     ],
     derivative: { rho: "q", mu: "tb", om: "dp*mg+g*A" },
-    series: ["r", "T", "D", "gap", "lngtt", ...(bath ? ["wall"] : [])],
+    series: ["r", "T", "D", "gap", "lngtt", "g", ...(bath ? ["wall"] : [])],
     outputs: [
       "r",
       "phi",

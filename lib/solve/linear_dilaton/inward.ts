@@ -32,7 +32,7 @@ export type LinearEnd<T> =
 
 /** Sizes below which the unknowns of the u-form need no relative accuracy. */
 export function floorsOf(kappa: number): Readonly<Record<string, number>> {
-  return { F: 1, w: 1e-6 * kappa, v: 1e-6 * kappa, gap: 1, E: 1e-3 };
+  return { F: 1, w: 1e-6 * kappa, v: 1e-6 * kappa, gap: 1, lngtt: 1, E: 1e-3 };
 }
 
 /** Parameters of the u-form. */
@@ -93,7 +93,11 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
       walker.place(from.time(), from.state());
       form = next;
     }
-    const followed = [...(T < 0 ? ["gap"] : []), ...(falling || Ep === 0 ? ["E"] : [])];
+    const followed = [
+      ...(T < 0 ? ["gap"] : []),
+      ...(falling || Ep === 0 ? ["E"] : []),
+      ...(engine.dense ? ["X", "lngtt"] : []),
+    ];
     const safe = walker.expand(followed);
     if (!(safe > 0)) return { end: "gave-up", why: "the step shrank to nothing", steps };
     let h = -Math.min(safe, T < 0 || X > 1e-30 ? 64 : 1e300);

@@ -82,7 +82,8 @@ export function outward<T>(
       walker.place(from.time(), from.state());
       form = next;
     }
-    const safe = walker.expand(["E"]), left = Math.log(end / x(o.X!)) + 0.125;
+    const safe = walker.expand(engine.dense ? ["E", "X"] : ["E"]),
+      left = Math.log(end / x(o.X!)) + 0.125;
     if (!(safe > 0)) return undefined;
     const h = Math.min(safe, Math.max(left, 0.125));
     engine.taken(form, walker, h);

@@ -50,6 +50,8 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
   readonly #S: Float64Array;
   readonly #sh: Float64Array;
   readonly #sl: Float64Array;
+  readonly #eh: Float64Array;
+  readonly #el: Float64Array;
   readonly #fixed: readonly DoubleDouble[];
   #x: DoubleDouble[] = [];
   #t: DoubleDouble = A.from(0);
@@ -69,6 +71,8 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
     ];
     this.#sh = new Float64Array(program.operations.length);
     this.#sl = new Float64Array(program.operations.length);
+    this.#eh = new Float64Array(program.operations.length);
+    this.#el = new Float64Array(program.operations.length);
     const fixed: DoubleDouble[] = [],
       point = { x: [], t: A.from(0), parameter: (n: string) => parameters[n]! };
     program.operations.forEach((o, i) => {
@@ -102,6 +106,11 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
     const { program, accuracy, compiled, row } = this.code, N = accuracy.order, W = N + 1;
     const values = this.#values(compiled.list);
     for (const i of compiled.list) {
+      const o = program.operations[i]!;
+      if (o.op === "expm1") {
+        const e = A.exp(values[o.a]!);
+        [this.#eh[i], this.#el[i]] = [e.hi, e.lo];
+      }
       const { hi, lo } = values[i]!, r = compiled.rows.get(i);
       this.#sh[i] = hi;
       this.#sl[i] = lo;
@@ -111,7 +120,7 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
     }
     const watched = [...program.unknowns, ...followed];
     const { unit, step } = adapted(this.unit, (H) => {
-      compiled.expand(this.#sh, this.#sl, H, N, this.#C, this.#L, this.#S);
+      compiled.expand(this.#sh, this.#sl, H, N, this.#C, this.#L, this.#S, this.#eh, this.#el);
       let s = Infinity;
       for (const name of watched) {
         const r = row[name]! * W;

@@ -103,7 +103,7 @@ function recurrence(
       if (isLinear(program, o.a)) return `z=${at(i, "k-1")}*${at(o.a, "1")}/k;`;
       return `z=0;${jsum(o.a, i, "1", "k")}z/=k;`;
     case "expm1":
-      return `z=0;${jsum(o.a, i, "1", "k-1")}z=(z+k*${at(o.a, "k")}*(1+${at(i, "0")}))/k;`;
+      return `z=0;${jsum(o.a, i, "1", "k-1")}z=(z+k*${at(o.a, "k")}*Math.exp(${s(o.a)}))/k;`;
     case "log":
       return `z=0;${jsum(i, o.a, "1", "k-1")}z=(${at(o.a, "k")}-z/k)/${at(o.a, "0")};`;
     case "log1p":

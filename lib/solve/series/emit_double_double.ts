@@ -8,7 +8,8 @@
 import type { Program } from "../../expr/program.ts";
 import { expansionRoots, isLinear, needed, rowsOf } from "./schedule.ts";
 
-/** Fills orders 1..N of the tables; order 0 and the scalars `sh`, `sl` (by operation) are given. */
+/** Fills orders 1..N of the tables; order 0, the scalars `sh`, `sl` (by operation) and the
+ * exponentials `eh`, `el` of the arguments of expm1 are given. */
 export type ExpandDoubleDouble = (
   sh: Float64Array,
   sl: Float64Array,
@@ -17,6 +18,8 @@ export type ExpandDoubleDouble = (
   C: Float64Array,
   L: Float64Array,
   S: Float64Array,
+  eh: Float64Array,
+  el: Float64Array,
 ) => void;
 
 /** Small double-double toolkit of the generated code: results in zh, zl. */
@@ -81,11 +84,9 @@ function recurrence(program: Program, i: number, row: (i: number) => number): st
     case "exp":
       if (isLinear(program, o.a)) return `mul(${at(i, "(k-1)")},${at(o.a, "1")});div(zh,zl,k,0);`;
       return `${weighted(row(o.a), row(i), "1", "k")}div(zh,zl,k,0);`;
-    case "expm1":
+    case "expm1": // exp(a_0) comes with the scalars: 1 + expm1(a_0) loses it where it is small
       return `${weighted(row(o.a), row(i), "1", "k-1")}div(zh,zl,k,0);{const h=zh,l=zl;` +
-        `mul(${at(o.a, "k")},C[${row(i)}*W],L[${row(i)}*W]);add(zh,zl,${
-          at(o.a, "k")
-        });add(h,l,zh,zl);}`;
+        `mul(${at(o.a, "k")},eh[${i}],el[${i}]);add(h,l,zh,zl);}`;
     case "log":
     case "log1p":
       return `${weighted(row(i), row(o.a), "1", "k-1")}div(zh,zl,k,0);add(${
@@ -138,7 +139,7 @@ export function emitExpandDoubleDouble(program: Program, stride: number): {
   }
   lines.push("}");
   const make = new Function(
-    `${TOOLKIT}return function(sh,sl,H,N,C,L,S){${lines.join("\n")}};`,
+    `${TOOLKIT}return function(sh,sl,H,N,C,L,S,eh,el){${lines.join("\n")}};`,
   ) as () => ExpandDoubleDouble;
   return { expand: make(), rows, list, rowCount: Math.max(-1, ...rows.values()) + 1 };
 }

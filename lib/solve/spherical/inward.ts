@@ -81,7 +81,11 @@ export function inward<T>(engine: Engine<T>, p: SphericalProblem<T>): SphericalE
       engine.forget(before);
       tried = rootB + 0.8 * (r - rootB);
     }
-    const followed = [...(T < 0 && !negative ? ["gap"] : []), ...(falling ? ["r"] : [])];
+    const followed = [
+      ...(T < 0 && !negative ? ["gap"] : []),
+      ...(falling ? ["r"] : []),
+      ...(engine.dense ? ["g", "r"] : []),
+    ];
     const safe = walker.expand(followed);
     if (!(safe > 0)) return { end: "gave-up", why: "the step shrank to nothing", steps };
     let h = -safe;

@@ -41,17 +41,18 @@ export function outward<T>(
   const parameters = { b: p.b, m, eta: A.from(0), rw: p.rw, pi: A.pi, kappa: p.kappa };
   const walker = engine.walker("bath", parameters, FLOORS, x(p.rh));
   walker.place(A.from(0), [A.from(ln0 / 2), first, first]);
+  const followed = engine.dense ? ["wall", "g"] : ["wall"];
   for (let steps = 0; steps < SETTINGS.steps; steps++) {
     const o = walker.outputs();
     if (!(x(o.r!) > 0) || !Number.isFinite(x(o.D!))) return undefined;
-    const safe = walker.expand(["wall"]);
+    const safe = walker.expand(followed);
     if (!(safe > 0)) return undefined;
     if (walker.series("wall", safe) < 0) {
       engine.taken("bath", walker, safe);
       walker.advance(safe);
       continue;
     }
-    land(walker, "wall", safe, ["wall"], (h) => engine.taken("bath", walker, h));
+    land(walker, "wall", safe, followed, (h) => engine.taken("bath", walker, h));
     const at = walker.outputs(), om = walker.state()[2]!, g = at.g!, dp = at.dp!;
     const delta = A.sub(
       om,
