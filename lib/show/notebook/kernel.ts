@@ -5,6 +5,7 @@
  * @module
  */
 import { type KernelPlace, type KernelProcess, startProcess } from "./child.ts";
+import { connectionText, freePorts } from "./connection.ts";
 import { Codec, type Message } from "./message.ts";
 import { connectSocket, type Socket } from "./zmtp.ts";
 
@@ -190,46 +191,6 @@ async function connectWhenUp(
     await after(20, null);
   }
   throw new Error("it did not listen in time");
-}
-
-/**
- * Text of a connection file.
- *
- * @param ports ports in the order shell, control, iopub, stdin, heartbeat
- * @param key secret that signs the messages
- * @returns contents of a Jupyter connection file
- */
-export function connectionText(
-  [shell, control, iopub, stdin, heartbeat]: number[],
-  key: string,
-): string {
-  return JSON.stringify({
-    transport: "tcp",
-    ip: "127.0.0.1",
-    shell_port: shell,
-    control_port: control,
-    iopub_port: iopub,
-    stdin_port: stdin,
-    hb_port: heartbeat,
-    signature_scheme: "hmac-sha256",
-    key,
-  });
-}
-
-/**
- * Ports of 127.0.0.1 that nobody listens on now.
- *
- * @param count how many
- * @returns different ports: all were held at once, then let go
- */
-export function freePorts(count: number): number[] {
-  const listeners = Array.from(
-    { length: count },
-    () => Deno.listen({ hostname: "127.0.0.1", port: 0 }),
-  );
-  const ports = listeners.map((listener) => listener.addr.port);
-  for (const listener of listeners) listener.close();
-  return ports;
 }
 
 function after<T>(milliseconds: number, value: T): Promise<T> {

@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
-import { connectionText, connectKernel, freePorts } from "../../../lib/show/notebook/kernel.ts";
+import { connectionText, freePorts } from "../../../lib/show/notebook/connection.ts";
+import { connectKernel } from "../../../lib/show/notebook/kernel.ts";
 import { kernelsFolder, kernelSpec } from "../../../lib/show/notebook/kernelspec.ts";
 import type { Message } from "../../../lib/show/notebook/message.ts";
 
@@ -56,26 +57,29 @@ describe("kernelSpec", () => {
         ports,
         key,
       );
-      const shown: Message[] = [];
-      kernel.onPublished = (message) => shown.push(message);
-      const run = (code: string) =>
-        kernel.request("execute_request", { code, silent: false, allow_stdin: false });
-      await run("const kappa = 12;");
-      const busy = run("while (true);");
-      await new Promise((go) => setTimeout(go, 500)); // the loop runs by then
-      expect(spec.interrupt_mode).toBe("message");
-      await kernel.interrupt();
-      expect((await busy).content.status).toBe("error");
-      await run("kappa + 1");
-      await new Promise((go) => setTimeout(go, 500)); // outputs may come after the reply
-      expect(
-        shown.filter(({ type }) => type === "execute_result").map(({ content }) => content.data),
-      )
-        .toEqual([{ "text/plain": "13" }]);
-      await kernel.shutdown();
-      expect(await ended).toBe(0);
-      await kernel.stop();
-      await Deno.remove(file);
+      try {
+        const shown: Message[] = [];
+        kernel.onPublished = (message) => shown.push(message);
+        const run = (code: string) =>
+          kernel.request("execute_request", { code, silent: false, allow_stdin: false });
+        await run("const kappa = 12;");
+        const busy = run("while (true);");
+        await new Promise((go) => setTimeout(go, 500)); // the loop runs by then
+        expect(spec.interrupt_mode).toBe("message");
+        await kernel.interrupt();
+        expect((await busy).content.status).toBe("error");
+        await run("kappa + 1");
+        await new Promise((go) => setTimeout(go, 500)); // outputs may come after the reply
+        expect(
+          shown.filter(({ type }) => type === "execute_result").map(({ content }) => content.data),
+        )
+          .toEqual([{ "text/plain": "13" }]);
+      } finally {
+        await kernel.shutdown();
+        expect(await ended).toBe(0);
+        await kernel.stop();
+        await Deno.remove(file);
+      }
     },
   );
 });

@@ -1,7 +1,7 @@
 import { describe, expect, it } from "vitest";
 import { chromium } from "playwright-core";
 import { notebookText } from "../../../lib/show/notebook/document.ts";
-import { freePorts } from "../../../lib/show/notebook/kernel.ts";
+import { freePorts } from "../../../lib/show/notebook/connection.ts";
 import { kernelSpec } from "../../../lib/show/notebook/kernelspec.ts";
 import { execute } from "./notebooks.ts";
 import { demoRun } from "./demo_run.ts";
