@@ -1,4 +1,56 @@
-/** @module */
+/**
+ * Back-reaction of quantum matter on static black holes: solve a row, audit an expression, read a run.
+ *
+ * @example A Boulware state opens a throat
+ * ```ts
+ * import { solve } from "@backstamp/backstamp";
+ * const hole = await solve({ model: "rst", state: "boulware", kappa: 1, mass: 10 });
+ * if (hole.kind !== "throat") throw new Error(hole.kind);
+ * ```
+ *
+ * @module
+ */
 export * from "./expr/tree.ts";
 export * from "./expr/parse.ts";
+export type { Operation as AlgebraOperation } from "./expr/nerdamer.ts";
+export { print } from "./expr/print.ts";
+export { lower, type SystemText } from "./expr/lower.ts";
+export { type AlgebraOptions, differentiate, type Discarded, simplify } from "./expr/algebra.ts";
+export type { Witness, WitnessOptions } from "./expr/verify.ts";
+export type { Range, Ranges } from "./expr/points.ts";
+export type { Family } from "./model/model.ts";
+export { decideZero, type ZeroDecision } from "./expr/zero.ts";
+export type { Operation, Program } from "./expr/program.ts";
+export { type CompiledModel, compileModel } from "./model/compile.ts";
+export {
+  MODEL_NAMES,
+  type ModelName,
+  type RowInput,
+  STATE_NAMES,
+  type StateName,
+} from "./model/input.ts";
+export {
+  type Bounded,
+  INNER_ENDS,
+  type InnerEnd,
+  type Kind,
+  KINDS,
+  NUMERIC_COLUMNS,
+  type NumericColumn,
+  type Profile,
+  PROFILE_COLUMNS,
+  type ProfileColumn,
+  type RowResult,
+} from "./observe/result.ts";
+export { computeRow, type RowOptions } from "./observe/row.ts";
+export { THRESHOLDS, VALIDITY_CODES } from "./observe/validity.ts";
+export {
+  closedForm,
+  type ClosedFormColumn,
+  type ClosedFormInput,
+  type ClosedFormKind,
+  type ClosedFormNumber,
+  type ClosedFormResult,
+} from "./solve/closed_form.ts";
+export { SETTINGS } from "./solve/settings.ts";
 export * from "./show/mod.ts";

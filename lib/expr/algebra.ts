@@ -15,10 +15,13 @@ import { compare, differences, type Witness, type WitnessOptions } from "./verif
 
 /** A proposal that was not believed. */
 export interface Discarded {
+  /** What was asked. */
   readonly op: Operation | "normal form";
+  /** Of which expression. */
   readonly input: string;
   /** What was proposed, or the error the algebra system gave. */
   readonly proposed: string;
+  /** Why it was not believed. */
   readonly why: string;
 }
 

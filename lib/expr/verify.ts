@@ -26,13 +26,17 @@ export interface Witness {
   readonly outcome: "agree" | "differ" | "no-points";
   /** Points used. */
   readonly count: number;
+  /** Digits of the evaluation. */
   readonly digits: number;
+  /** Seed of the points. */
   readonly seed: number;
   /** Largest residual seen, relative to the largest term (to two digits, decimal text). */
   readonly residual: string;
   /** Where it differs, with both sides to 15 digits. */
   readonly at?: Readonly<Record<string, string>>;
+  /** Left side at the point where the two differ. */
   readonly left?: string;
+  /** Right side there. */
   readonly right?: string;
 }
 

@@ -19,6 +19,7 @@ export interface ZeroDecision {
   readonly verdict: "proved" | "holds-numerically" | "nonzero" | "undecided";
   /** The algorithm that reached zero, empty if none did. */
   readonly algorithm: string;
+  /** The numeric witness. */
   readonly witness: Witness;
 }
 

@@ -20,7 +20,9 @@ import type { Family, Model } from "./model.ts";
 
 /** A model ready for the solver: plain data, can be posted to a worker. */
 export interface CompiledModel {
+  /** Name in the catalogue. */
   readonly name: ModelName;
+  /** Asymptotic family. */
   readonly family: Family;
   /** Whether 1 + 2 h + k vanishes identically (the exactly solvable family). */
   readonly solvable: boolean;
@@ -127,6 +129,7 @@ function forms(
       empty: spherical("empty"),
       negative: spherical("empty-negative"),
       bath: spherical("bath"),
+      heavy: spherical("heavy-bath"),
     };
 }
 

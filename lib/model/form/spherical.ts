@@ -20,23 +20,26 @@
  */
 import type { SystemText } from "../../expr/lower.ts";
 
-/** Matter without a bath (c = 0), the same around a negative mass (rho' < 0), or with a bath. */
-export type Surroundings = "empty" | "empty-negative" | "bath";
+/**
+ * Matter without a bath (c = 0), the same around a negative mass (rho' < 0), with a bath, or with a bath
+ * that gravitates as much as the hole (r itself is the unknown then: e^{2 rho} may pass 1).
+ */
+export type Surroundings = "empty" | "empty-negative" | "bath" | "heavy-bath";
 
 /** The system in sigma. */
 export function spherical(surroundings: Surroundings): SystemText {
-  const bath = surroundings === "bath";
+  const heavy = surroundings === "heavy-bath", bath = heavy || surroundings === "bath";
   return {
     independent: "sigma",
-    unknowns: ["rho", "mu", "om"],
+    unknowns: ["rho", "mu", heavy ? "r" : "om"],
     parameters: bath ? ["b", "m", "eta", "rw", "pi", "kappa"] : ["b", "m", "pi", "kappa"],
     let: [
       ["g", "exp(2*rho)"],
       ["mg", "-expm1(2*rho)"],
-      ["r", "(2*m+b*om)/mg"],
+      ...(heavy ? [] : [["r", "(2*m+b*om)/mg"]] as const),
       ["r2", "r^2"],
       ["d", "r2-b"],
-      ["x", "(b*om+2*m*g)/mg"], // r - 2m
+      ["x", heavy ? "r-2*m" : "(b*om+2*m*g)/mg"], // r - 2m
       ["m0", bath ? "m-b/(4*m)" : "m"],
       ["q", "(m0+b*mu)/d"],
       ["de", bath ? "(x*(r+2*m)+eta*d-4*m*b*mu)/(4*m*d)" : "-q"],
@@ -46,8 +49,9 @@ export function spherical(surroundings: Surroundings): SystemText {
       ["D", "g+T"],
       ["rq", "r*q"],
       ["p", surroundings === "empty-negative" ? "sqrt(rq^2+D)-rq" : "D/(rq+sqrt(rq^2+D))"],
+      ...(heavy ? [["om", "(r*mg-2*m)/b"]] as const : []),
       ["A", bath ? "(om*d+x*(r+2*m)/(2*m)-2*r2*mu)/(r*d)" : "(om*d-2*m-2*r2*mu)/(r*d)"],
-      ["dp", "(g*A+tb)/(p+g+2*rq)"], // (p - g)/b
+      ["dp", heavy ? "(p-g)/b" : "(g*A+tb)/(p+g+2*rq)"], // (p - g)/b
       ["rhopp", "-(g*mg-2*g*b*dp-b^2*dp^2)/d"],
       ["curvature", "-2*rhopp/g"],
       ["gap", "2*rho-log(-T)"],
@@ -61,10 +65,11 @@ export function spherical(surroundings: Surroundings): SystemText {
       ["erho", "exp(rho)"],
       ["flux", "tb"], // c^2/4 - rho'^2
     ],
-    derivative: { rho: "q", mu: "tb", om: "dp*mg+g*A" },
+    derivative: { rho: "q", mu: "tb", om: "dp*mg+g*A", r: "p" },
     series: ["r", "T", "D", "gap", "lngtt", "g", ...(bath ? ["wall"] : [])],
     outputs: [
       "r",
+      "om",
       "phi",
       "g",
       "D",

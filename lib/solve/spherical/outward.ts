@@ -39,21 +39,28 @@ export function outward<T>(
   const ln0 = Math.log(A.epsilon) * 0.75 + 2 * Math.log(Math.min(1, relative));
   const g0 = A.exp(A.from(ln0)), first = A.div(A.mul(g0, p.rh), d);
   const parameters = { b: p.b, m, eta: A.from(0), rw: p.rw, pi: A.pi, kappa: p.kappa };
-  const walker = engine.walker("bath", parameters, FLOORS, x(p.rh));
+  let form = "bath", walker = engine.walker(form, parameters, FLOORS, x(p.rh));
   walker.place(A.from(0), [A.from(ln0 / 2), first, first]);
   const followed = engine.dense ? ["wall", "g"] : ["wall"];
   for (let steps = 0; steps < SETTINGS.steps; steps++) {
     const o = walker.outputs();
     if (!(x(o.r!) > 0) || !Number.isFinite(x(o.D!))) return undefined;
+    if (form === "bath" && x(p.b) * x(o.om!) < -x(m)) { // the gas weighs half the hole
+      const from = walker, [rho, mu] = from.state();
+      form = "heavy";
+      walker = engine.walker(form, parameters, FLOORS, x(p.rh));
+      walker.place(from.time(), [rho!, mu!, o.r!]);
+    }
     const safe = walker.expand(followed);
     if (!(safe > 0)) return undefined;
     if (walker.series("wall", safe) < 0) {
-      engine.taken("bath", walker, safe);
+      engine.taken(form, walker, safe);
       walker.advance(safe);
       continue;
     }
-    land(walker, "wall", safe, followed, (h) => engine.taken("bath", walker, h));
-    const at = walker.outputs(), om = walker.state()[2]!, g = at.g!, dp = at.dp!;
+    land(walker, "wall", safe, followed, (h) => engine.taken(form, walker, h));
+    const at = walker.outputs(), om = at.om!, g = at.g!, dp = at.dp!;
+    if (!(x(at.p!) > 0)) return undefined;
     const delta = A.sub(
       om,
       A.mul(p.rw, A.add(A.mul(two, dp), A.div(A.mul(p.b, A.mul(dp, dp)), g))),
