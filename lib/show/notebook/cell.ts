@@ -52,7 +52,7 @@ export async function supervise(
   timer.clear();
   stop.clear();
   if (typeof first === "object") return ending(first);
-  if (first !== "time" && first !== "stop") return died(`The kernel died: ${first}`);
+  if (first !== "time" && first !== "stop") return died(`The kernel was lost: ${first}`);
   const why = first === "stop"
     ? "The run was stopped from outside"
     : `The cell ran longer than its limit of ${limits.timeout / 1000} s`;

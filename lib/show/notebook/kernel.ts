@@ -166,12 +166,12 @@ async function listen(
     if (frames === null) break;
     decoding = decoding.then(async () => {
       const message = await codec.decode(frames).catch(() => null);
-      if (message === null) fail("a message of it was broken or wrongly signed");
+      if (message === null) fail("a message of it was broken, as after a display above 4 MB");
       else take(message);
     });
   }
   await decoding;
-  fail("it closed the connection");
+  fail("its stream of messages broke off");
 }
 
 async function connectWhenUp(

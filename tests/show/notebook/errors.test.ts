@@ -5,6 +5,8 @@ import { execute, runs } from "./notebooks.ts";
 type ErrorOutput = Extract<Output, { output_type: "error" }>;
 
 const BEFORE = 'console.log("before");';
+/** What a kernel has not sent yet dies with it: a quarter of a second is ample for one line. */
+const PAUSE = "await new Promise((go) => setTimeout(go, 250));";
 
 /** Executes a good cell, a faulty one and one more; returns the one error output of the faulty cell. */
 async function fault(source: string, seconds?: number): Promise<ErrorOutput> {
@@ -95,17 +97,31 @@ describe("a cell that fails ends the execution with an error output and the kern
     });
   });
 
+  it("displays so large that they may break the kernel's stream, unless all arrive whole", async () => {
+    const { notebook, failure } = await execute([
+      "for (let i = 0; i < 5; i++) await Deno.jupyter.display(" +
+      '{ "text/plain": "x".repeat(1e7) }, { raw: true });',
+    ], 20);
+    const outputs = notebook.cells[0].outputs ?? [];
+    const whole = outputs.filter((output) =>
+      output.output_type === "display_data" && output.data["text/plain"] === "x".repeat(1e7)
+    );
+    if (failure === undefined) expect(whole).toHaveLength(5);
+    else expect(outputs.at(-1)).toMatchObject({ output_type: "error" });
+    expect(outputs.length - whole.length).toBe(failure === undefined ? 0 : 1);
+  });
+
   it("a kernel that exits", async () => {
-    expect(await fault("Deno.exit(7)")).toMatchObject({
+    expect(await fault(PAUSE + "Deno.exit(7)")).toMatchObject({
       ename: "KernelDied",
-      evalue: "The kernel died: it ended with exit code 7",
+      evalue: "The kernel was lost: it ended with exit code 7",
     });
   });
 
   it.runIf(Deno.build.os !== "windows")("a kernel that is killed", async () => {
-    expect(await fault('Deno.kill(Deno.pid, "SIGKILL")')).toMatchObject({
+    expect(await fault(PAUSE + 'Deno.kill(Deno.pid, "SIGKILL")')).toMatchObject({
       ename: "KernelDied",
-      evalue: "The kernel died: it ended with exit code 137", // 128 + SIGKILL
+      evalue: "The kernel was lost: it ended with exit code 137", // 128 + SIGKILL
     });
   });
 });
