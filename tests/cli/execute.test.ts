@@ -26,6 +26,15 @@ function start(...args: string[]): Deno.ChildProcess {
   }).spawn();
 }
 
+/** Starts the command as a user does. */
+function startTask(...args: string[]): Deno.ChildProcess {
+  return new Deno.Command(Deno.execPath(), {
+    args: ["task", "execute", ...args],
+    stdout: "piped",
+    stderr: "piped",
+  }).spawn();
+}
+
 async function run(...args: string[]): Promise<{ code: number; out: string; err: string }> {
   const { code, stdout, stderr } = await start(...args).output();
   const decoder = new TextDecoder();
@@ -86,17 +95,23 @@ describe("deno task execute", () => {
     expect(err).toContain("its language must be typescript: language is python");
   });
 
-  it.runIf(Deno.build.os !== "windows").each(["SIGINT", "SIGTERM", "SIGKILL"] as const)(
-    "takes its kernel along when it ends by %s",
-    async (signal) => {
-      const note = `${folder}/pid-${signal}`;
+  const ends = ["SIGINT", "SIGTERM", "SIGKILL"] as const;
+  it.runIf(Deno.build.os !== "windows").each([
+    ...ends.map((signal) => ({ signal, by: "the command" })),
+    ...ends.map((signal) => ({ signal, by: "deno task" })),
+  ])(
+    "takes its kernel along when $by ends by $signal",
+    async ({ signal, by }) => {
+      const note = `${folder}/pid-${signal}-${by.length}`;
       const path = save(
-        `hangs-${signal}.ipynb`,
+        `hangs-${signal}-${by.length}.ipynb`,
         `Deno.writeTextFileSync(${
           JSON.stringify(note)
         }, String(Deno.pid)); await new Promise(() => {})`,
       );
-      const command = start(path, "--out", `${folder}/out`);
+      const command = by === "the command"
+        ? start(path, "--out", `${folder}/out`)
+        : startTask(path, "--out", `${folder}/out`);
       const output = command.output();
       const pid = (): number => {
         try {
@@ -113,7 +128,7 @@ describe("deno task execute", () => {
       if (signal === "SIGKILL") return;
       expect(code).toBe(3);
       const written = parseNotebook(
-        Deno.readTextFileSync(`${folder}/out/hangs-${signal}.ipynb`),
+        Deno.readTextFileSync(`${folder}/out/hangs-${signal}-${by.length}.ipynb`),
         "hangs.ipynb",
       );
       expect(written.cells[0].outputs).toMatchObject([{
