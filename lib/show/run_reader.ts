@@ -40,6 +40,17 @@ const DEMO = fileURLToPath(new URL("../../out/demo", import.meta.url));
  * @returns the run
  * @throws {Error} if there is no such run, if it has other columns, or if `results.csv` is not the one that
  * the run wrote
+ * @example
+ * ```ts
+ * import { readRun } from "@backstamp/backstamp";
+ * let message = "";
+ * try {
+ *   readRun("lib");
+ * } catch (error) {
+ *   message = (error as Error).message;
+ * }
+ * if (!message.includes("must hold results.csv")) throw new Error(message);
+ * ```
  */
 export function readRun(folder: string = Deno.env.get(RUN_VARIABLE) || DEMO): Run {
   const results = readIfPresent(`${folder}/${FILES.results}`);
@@ -86,6 +97,12 @@ export function readRun(folder: string = Deno.env.get(RUN_VARIABLE) || DEMO): Ru
  * @param row cells
  * @param column numeric column
  * @returns value and bound, or undefined where the cell is empty
+ * @example
+ * ```ts
+ * import { numberOf } from "@backstamp/backstamp";
+ * const row = { mass: "10", mass_err: "0" };
+ * if (numberOf(row, "mass")?.value !== 10) throw new Error();
+ * ```
  */
 export function numberOf(row: ResultCells, column: NumericColumn): Bounded | undefined {
   const value = readResultNumber(row[column]);

@@ -32,6 +32,13 @@ const titleOf = (name: string): string =>
  *
  * @param run run
  * @returns a table that shows itself
+ * @example
+ * ```ts
+ * import { DISPLAY, resultsTable } from "@backstamp/backstamp";
+ * const run = { folder: "", name: "demo", rows: [], results: new Uint8Array(), stamp: "", profiles: [] };
+ * const text = resultsTable(run)[DISPLAY]()["text/plain"];
+ * if (!/^Case/.test(String(text))) throw new Error(String(text));
+ * ```
  */
 export function resultsTable(run: Run): Displayable {
   const header = ["Case", "Model", "State", "Kind", ...SHOWN.map(titleOf), "Validity", "Stamp"];
@@ -57,6 +64,13 @@ export function resultsTable(run: Run): Displayable {
  * @param run run
  * @param count how many
  * @returns a table that shows itself
+ * @example
+ * ```ts
+ * import { DISPLAY, worstBounds } from "@backstamp/backstamp";
+ * const run = { folder: "", name: "demo", rows: [], results: new Uint8Array(), stamp: "", profiles: [] };
+ * const text = worstBounds(run)[DISPLAY]()["text/plain"];
+ * if (!/Bound over value/.test(String(text))) throw new Error(String(text));
+ * ```
  */
 export function worstBounds(run: Run, count = 10): Displayable {
   const all = run.rows.flatMap((row) =>
@@ -82,6 +96,13 @@ export function worstBounds(run: Run, count = 10): Displayable {
  *
  * @param run run
  * @returns a table that shows itself
+ * @example
+ * ```ts
+ * import { DISPLAY, reasonsTable } from "@backstamp/backstamp";
+ * const run = { folder: "", name: "demo", rows: [], results: new Uint8Array(), stamp: "", profiles: [] };
+ * const text = reasonsTable(run)[DISPLAY]()["text/plain"];
+ * if (!/No row/.test(String(text))) throw new Error(String(text));
+ * ```
  */
 export function reasonsTable(run: Run): Displayable {
   const rows = run.rows.filter((row) => row.reason !== "")
@@ -95,6 +116,11 @@ export function reasonsTable(run: Run): Displayable {
  *
  * @param run run
  * @returns a figure that shows itself
+ * @example
+ * ```ts
+ * import { kindsFigure, type Run } from "@backstamp/backstamp";
+ * const show = (run: Run) => Deno.jupyter.display(kindsFigure(run));
+ * ```
  */
 export function kindsFigure(run: Run): Displayable {
   const svg = kindsMap(readResultRows(run.results), { stamp: run.stamp });
@@ -117,6 +143,11 @@ export interface Residuals {
  * @param run run
  * @param name case with a profile
  * @returns largest residuals
+ * @example
+ * ```ts
+ * import { profileResiduals, type Run } from "@backstamp/backstamp";
+ * const first = (run: Run) => profileResiduals(run, run.profiles[0]);
+ * ```
  */
 export async function profileResiduals(run: Run, name: string): Promise<Residuals> {
   const profile = readProfileRows(await Deno.readFile(`${run.folder}/profiles/${name}.csv`));
@@ -136,6 +167,13 @@ export async function profileResiduals(run: Run, name: string): Promise<Residual
  * @param residuals residuals of profiles
  * @param count how many
  * @returns a table that shows itself
+ * @example
+ * ```ts
+ * import { DISPLAY, residualsTable } from "@backstamp/backstamp";
+ * const one = { case: "x", points: 9, largest: [1e-12, 2e-12, 0] as const };
+ * const text = residualsTable([one])[DISPLAY]()["text/plain"];
+ * if (!/2.0e-12/.test(String(text))) throw new Error(String(text));
+ * ```
  */
 export function residualsTable(residuals: readonly Residuals[], count = 10): Displayable {
   const worst = [...residuals]
@@ -154,6 +192,13 @@ export function residualsTable(residuals: readonly Residuals[], count = 10): Dis
  *
  * @param run run
  * @returns a table that shows itself
+ * @example
+ * ```ts
+ * import { DISPLAY, runStamp } from "@backstamp/backstamp";
+ * const run = { folder: "", name: "demo", rows: [], results: new Uint8Array(), stamp: "", profiles: [] };
+ * const text = runStamp(run)[DISPLAY]()["text/plain"];
+ * if (!/demo/.test(String(text))) throw new Error(String(text));
+ * ```
  */
 export function runStamp(run: Run): Displayable {
   return displayable(tableBundle([], [

@@ -38,7 +38,16 @@ const STRAY_LIMIT = 1 << 16;
 export function startProcess(connectionFile: string, place: KernelPlace): KernelProcess {
   const keeper = new URL("./keeper.ts", import.meta.url).href;
   const child = spawnDeno(
-    ["run", "--no-config", "--no-lock", "--allow-run", "--allow-read", keeper, connectionFile],
+    [
+      "run",
+      "--no-prompt",
+      "--no-config",
+      "--no-lock",
+      "--allow-run",
+      "--allow-read",
+      keeper,
+      connectionFile,
+    ],
     place,
   );
   let stray = "";

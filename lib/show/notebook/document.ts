@@ -116,6 +116,11 @@ export function notebookText(notebook: Notebook): string {
  *
  * @param text text, whole or by lines
  * @returns the whole text
+ * @example
+ * ```ts
+ * import { wholeText } from "@backstamp/backstamp";
+ * if (wholeText(["a\n", "b"]) !== "a\nb") throw new Error();
+ * ```
  */
 export function wholeText(text: Multiline): string {
   return typeof text === "string" ? text : text.join("");
