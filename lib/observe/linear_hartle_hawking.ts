@@ -7,6 +7,7 @@ import type { RowInput } from "../model/input.ts";
 import type { Engine } from "../solve/engine.ts";
 import { type HorizonRoot, horizonRoot } from "../solve/horizon_root.ts";
 import { outward } from "../solve/linear_dilaton/outward.ts";
+import { SETTINGS } from "../solve/settings.ts";
 import { type LinearConstants, linearConstants, massParameter } from "./linear_row.ts";
 import { bare, failed, refused, type Solution } from "./solution.ts";
 
@@ -126,10 +127,11 @@ function refine<T>(
   guess: Extract<HorizonRoot, { found: true }>,
 ) {
   const A = engine.arithmetic, x = A.toNumber;
-  let Eh = A.from(guess.at), far = fromHorizon(engine, c, Eh);
-  for (let i = 0; far && i < 8; i++) {
-    const step = A.div(A.sub(far.m, m), A.from(guess.slope));
-    if (Math.abs(x(step)) <= A.epsilon * Math.abs(x(Eh))) break;
+  let Eh = A.from(guess.at), far = fromHorizon(engine, c, Eh), before = Infinity;
+  for (let i = 0; far && i < SETTINGS.rounds; i++) {
+    const step = A.div(A.sub(far.m, m), A.from(guess.slope)), size = Math.abs(x(step));
+    if (size <= A.epsilon * Math.abs(x(Eh)) || (i > 1 && size > before / 2)) break; // down to round-off
+    before = size;
     Eh = A.sub(Eh, step);
     far = fromHorizon(engine, c, Eh);
   }

@@ -11,7 +11,7 @@ export type HorizonRoot =
   | { readonly found: false; readonly least: number };
 
 /**
- * The outermost root of `excess` above `critical`. Further out the mass grows with the horizon; towards the
+ * The outermost root, to nine digits (the caller corrects it in its own arithmetic), of `excess` above `critical`. Further out the mass grows with the horizon; towards the
  * critical value it may turn, so the search walks in from outside until the excess changes sign.
  *
  * @param excess Mass at a horizon minus the wanted one; NaN where no far region was reached.
@@ -40,7 +40,7 @@ export function horizonRoot(
     if (inner - critical < 1e-10 * critical) break;
   }
   if (!(fInner <= 0 && fOuter >= 0)) return { found: false, least };
-  for (let i = 0; i < 100 && outer - inner > 2e-16 * outer && fInner !== fOuter; i++) {
+  for (let i = 0; i < 100 && outer - inner > 1e-9 * outer && fInner !== fOuter; i++) {
     const secant = inner - fInner * (outer - inner) / (fOuter - fInner),
       middle = (inner + outer) / 2;
     const x = i % 3 < 2 && secant > inner && secant < outer ? secant : middle;

@@ -106,26 +106,30 @@ function match<T>(
   let excess = A.neg(A.div(far.v, s)); // as if w were already linear
   let shift = A.add(A.mul(two, A.log1p(excess)), A.mul(two, far.w)); // u_asymptotic - u
   let m = A.sub(far.F, A.mul(A.exp(far.u), A.expm1(shift)));
+  // the series runs to the same accuracy as a start at SETTINGS.far, here 16 times farther out
+  const { linearDilaton } = SETTINGS.far;
+  const terms =
+    Math.ceil(engine.startTerms * Math.log(linearDilaton) / Math.log(16 * linearDilaton)) + 1;
+  let before = Infinity;
   for (let round = 0; round < SETTINGS.rounds; round++) {
     const u = A.add(far.u, shift);
     const point = farSeries(
       A,
       { kappa: p.kappa, eps: A.neg(excess), hp: p.hp, k: p.k, delta: p.delta, m },
       u,
-      engine.startTerms,
+      terms,
     );
     // F_asymptotic = E - e^u = F - e^u_horizon (e^shift - 1)
     const target = A.sub(far.F, A.mul(A.exp(far.u), A.expm1(shift)));
     const dm = A.sub(target, point.F);
     const newExcess = A.div(A.sub(point.v, far.v), s);
     const newShift = A.add(A.mul(two, A.log1p(newExcess)), A.mul(two, A.sub(far.w, point.w)));
-    const change = Math.abs(x(dm)) + Math.abs(x(A.sub(newExcess, excess))) * 64 * x(A.exp(far.u));
+    const change = Math.abs(x(dm)) + Math.abs(x(A.sub(newExcess, excess))) * x(A.exp(far.u));
     m = A.add(m, dm);
     [excess, shift] = [newExcess, newShift];
-    if (round > 2 && change < A.epsilon * Math.abs(x(p.Eh))) {
-      return { m, excess, uFar: A.add(far.u, shift) };
-    }
     if (!Number.isFinite(change)) return undefined;
+    if (round > 1 && !(change < before / 2)) break; // contracts by about 1/2000 until round-off is reached
+    before = change;
   }
   return { m, excess, uFar: A.add(far.u, shift) };
 }
