@@ -54,3 +54,11 @@ export {
 } from "./solve/closed_form.ts";
 export { SETTINGS } from "./solve/settings.ts";
 export * from "./show/mod.ts";
+export { derive } from "./expr/derive.ts";
+export { elementary } from "./expr/elementary.ts";
+export { normalIsZero, type NormalOptions } from "./expr/normal.ts";
+export { points, uniform } from "./expr/points.ts";
+export { compare } from "./expr/verify.ts";
+export { type Axis, axisLabel } from "./show/axis.ts";
+export { chosenCases, writeFigures } from "./show/figures.ts";
+export type { ResultRow } from "./show/result_rows.ts";

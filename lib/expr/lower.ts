@@ -42,7 +42,7 @@ type Rational = { p: bigint; q: bigint };
  * const program = lower({
  *   independent: "t", unknowns: ["x"], parameters: [], let: [], derivative: { x: "-x" }, series: [], outputs: [],
  * }, {});
- * if (program.operations.length !== 2) throw new Error("expected x and -x");
+ * if (program.operations.length !== 3) throw new Error("expected t, x and -x");
  * ```
  */
 export function lower(system: SystemText, bindings: Readonly<Record<string, Expr>>): Program {

@@ -77,7 +77,8 @@ function mathjs(): Promise<Mathjs> {
  * @throws {RangeError} if digits is out of range.
  * @example Sixty digits of exp(1)
  * ```ts
- * import { parse, precise } from "@backstamp/backstamp";
+ * import { parse } from "./parse.ts";
+ * import { precise } from "./precise.ts";
  * const { evaluate } = await precise(60);
  * const e = evaluate(parse("exp(x)"), { x: 1 });
  * if (!e.toString().startsWith("2.71828182845904523536028747135")) throw new Error("not e");
