@@ -6,6 +6,7 @@
  */
 import { basename, join } from "node:path";
 import { parseNotebook, wholeText } from "../show/notebook/document.ts";
+import { spawnDeno } from "../show/notebook/spawn_deno.ts";
 import { programPath } from "./launch.ts";
 import { closing, STATUS } from "./status.ts";
 
@@ -41,7 +42,7 @@ async function main(): Promise<number> {
     let status: number = STATUS.done;
     for (const check of [["fmt", "--check"], ["check"]]) {
       const args = [...check, "--config", programPath("deno.json"), ...modules];
-      const { success } = await new Deno.Command(Deno.execPath(), { args }).spawn().status;
+      const { success } = await spawnDeno({ args }).status;
       if (!success) status = STATUS.failed;
     }
     return status;

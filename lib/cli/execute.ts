@@ -33,7 +33,7 @@ function checkPaths(notebooks: readonly string[], run?: string): void {
 }
 
 function report(notebook: string, { path, failure, strayText }: ExecutedFile): void {
-  if (strayText !== "") console.error(`${notebook}: written past the notebook:\n${strayText}`);
+  if (strayText !== "") console.error(`${notebook}: the kernel said:\n${strayText}`);
   if (failure === undefined) return console.log(`Executed: ${path}`);
   const { position, id, message } = failure;
   console.error(`${notebook}: cell ${position} (${id}): ${message}`);

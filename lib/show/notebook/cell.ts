@@ -3,9 +3,9 @@
  *
  * @module
  */
-import { spawnDeno } from "./child.ts";
 import type { Kernel } from "./kernel.ts";
 import type { Message } from "./message.ts";
+import { spawnDeno } from "./spawn_deno.ts";
 
 /** How code ended. */
 export interface Ending {
@@ -88,7 +88,8 @@ function died(evalue: string, ename = "KernelDied"): Ending {
  */
 export async function syntaxFault(code: string): Promise<string> {
   const args = ["fmt", "--no-config", "--ext=ts", "-"];
-  const parser = spawnDeno(args, { cwd: ".", env: { NO_COLOR: "1" } });
+  const env = { NO_COLOR: "1" };
+  const parser = spawnDeno({ args, env, stdin: "piped", stdout: "null", stderr: "piped" });
   const writer = parser.stdin.getWriter();
   await writer.write(new TextEncoder().encode(code)).then(() => writer.close()).catch(() => {});
   const { success, stderr } = await parser.output();

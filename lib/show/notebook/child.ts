@@ -3,12 +3,13 @@
  *
  * @module
  */
+import { spawnDeno } from "./spawn_deno.ts";
 
 /** A running kernel process. */
 export interface KernelProcess {
   /** Exit code of the kernel; settles when it has ended, for whatever reason. */
   readonly ended: Promise<number>;
-  /** What the process wrote to its own standard output and error so far: at most the last 64 KiB. */
+  /** What the process said on its own standard output and error so far: at most the last 64 KiB. */
   strayText(): string;
   /** Kills the kernel if it still runs and waits until it is gone. */
   kill(): Promise<void>;
@@ -37,19 +38,15 @@ const STRAY_LIMIT = 1 << 16;
  */
 export function startProcess(connectionFile: string, place: KernelPlace): KernelProcess {
   const keeper = new URL("./keeper.ts", import.meta.url).href;
-  const child = spawnDeno(
-    [
-      "run",
-      "--no-prompt",
-      "--no-config",
-      "--no-lock",
-      "--allow-run",
-      "--allow-read",
-      keeper,
-      connectionFile,
-    ],
-    place,
-  );
+  const permissions = ["--no-prompt", "--allow-run", "--allow-read"];
+  const child = spawnDeno({
+    args: ["run", "--no-config", "--no-lock", ...permissions, keeper, connectionFile],
+    cwd: place.cwd,
+    env: { ...place.env },
+    stdin: "piped",
+    stdout: "piped",
+    stderr: "piped",
+  });
   let stray = "";
   const drain = async (stream: ReadableStream<Uint8Array>): Promise<void> => {
     const decoder = new TextDecoder();
@@ -70,25 +67,4 @@ export function startProcess(connectionFile: string, place: KernelPlace): Kernel
       await ended;
     },
   };
-}
-
-/**
- * Starts the Deno that runs this program. Under `--allow-run=deno` only the name on PATH may be started,
- * under `--allow-run` and `-A` its own path, which also works where PATH has no deno.
- */
-export function spawnDeno(args: readonly string[], place: KernelPlace): Deno.ChildProcess {
-  const options: Deno.CommandOptions = {
-    args: [...args],
-    cwd: place.cwd,
-    env: { ...place.env },
-    stdin: "piped",
-    stdout: "piped",
-    stderr: "piped",
-  };
-  try {
-    return new Deno.Command(Deno.execPath(), options).spawn();
-  } catch (error) {
-    if (!(error instanceof Deno.errors.NotCapable)) throw error;
-    return new Deno.Command("deno", options).spawn();
-  }
 }

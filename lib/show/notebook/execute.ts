@@ -32,7 +32,7 @@ export interface Executed {
   readonly notebook: Notebook;
   /** The failure, unless all cells ran. */
   readonly failure?: CellFailure;
-  /** Text that the kernel's process wrote past the notebook, such as output of child processes. */
+  /** What the kernel's process itself said, such as the reason of a crash; not what a cell wrote. */
   readonly strayText: string;
 }
 
@@ -44,7 +44,8 @@ const SETTLE = 10_000;
 
 /**
  * Executes a notebook from top to bottom, up to the first cell that fails. The kernel has all permissions
- * and is gone when this returns.
+ * and is gone when this returns. What a cell writes to `Deno.stdout` instead of the console is not kept: the
+ * kernel drops it.
  *
  * @param original notebook, left as it is
  * @param options working directory, environment and limits

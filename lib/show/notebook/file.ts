@@ -26,7 +26,7 @@ export interface ExecutedFile {
   readonly path: string;
   /** Where it stopped, unless all cells ran. */
   readonly failure?: CellFailure;
-  /** Text that went past the notebook. */
+  /** What the kernel's process itself said. */
   readonly strayText: string;
 }
 

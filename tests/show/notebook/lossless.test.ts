@@ -99,6 +99,19 @@ describe("executeNotebook", () => {
     ]);
   });
 
+  it.runIf(Deno.build.os !== "windows")(
+    "waits for no program that the notebook left behind",
+    async () => {
+      const start = performance.now();
+      const { notebook } = await execute([
+        'new Deno.Command("sleep", { args: ["30"] }).spawn().pid',
+      ]);
+      expect(performance.now() - start).toBeLessThan(20_000); // the program sleeps for 30 s
+      const [result] = notebook.cells[0].outputs as { data: Record<string, string> }[];
+      Deno.kill(Number(result.data["text/plain"]), "SIGKILL");
+    },
+  );
+
   it("waits for the output of a timer that fires after the last cell", async () => {
     const { notebook } = await execute(['setTimeout(() => console.log("late"), 700); 0;']);
     expect(notebook.cells[0].outputs?.at(-1)).toEqual({
