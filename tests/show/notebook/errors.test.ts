@@ -78,21 +78,21 @@ describe("a cell that fails ends the execution with an error output and the kern
   });
 
   it("a busy loop over its time is interrupted", async () => {
-    expect(await fault("while (true) {}", 2)).toMatchObject({
+    expect(await fault("while (true) {}", 3)).toMatchObject({
       ename: "TimeoutError",
-      evalue: "The cell ran longer than its limit of 2 s; it was interrupted",
+      evalue: "The cell ran longer than its limit of 3 s; it was interrupted",
     });
   });
 
   it("a promise that never settles costs the kernel", async () => {
-    expect(await fault("await new Promise(() => {})", 2)).toMatchObject({
+    expect(await fault("await new Promise(() => {})", 3)).toMatchObject({
       ename: "TimeoutError",
       evalue: expect.stringContaining("its kernel was ended"),
     });
   });
 
   it("a busy loop that begins in a timer after its cell", async () => {
-    expect(await fault("setTimeout(() => { while (true); }, 0); 0;", 2)).toMatchObject({
+    expect(await fault("setTimeout(() => { while (true); }, 0); 0;", 3)).toMatchObject({
       ename: "TimeoutError",
     });
   });
