@@ -63,63 +63,83 @@ describe("nbformat's validator (python3-nbformat)", () => {
 });
 
 describe("the classic notebook page in Chromium (jupyter-notebook, chromium)", () => {
-  it.runIf(havePage)("opens notebooks/survey.ipynb and runs all its cells", async () => {
-    const data = await Deno.makeTempDir();
-    const run = await demoRun(data);
-    // a copy, as the page saves by itself; inside the repository, whose import map it needs
-    await Deno.mkdir("out", { recursive: true });
-    const folder = await Deno.realPath(await Deno.makeTempDir({ dir: "out" }));
-    await Deno.copyFile("notebooks/survey.ipynb", `${folder}/survey.ipynb`);
-    await Deno.mkdir(`${data}/kernels/backstamp`, { recursive: true });
-    const spec = JSON.stringify(kernelSpec(Deno.version.deno));
-    await Deno.writeTextFile(`${data}/kernels/backstamp/kernel.json`, spec);
-    const [[port], token] = [freePorts(1), crypto.randomUUID()];
-    const server = new Deno.Command(NOTEBOOK, {
-      args: [
-        "--no-browser",
-        "--ip=127.0.0.1",
-        `--port=${port}`,
-        "--port-retries=0",
-        "--allow-root",
-        `--NotebookApp.token=${token}`,
-        `--notebook-dir=${folder}`,
-      ],
-      env: { JUPYTER_DATA_DIR: data, JUPYTER_RUNTIME_DIR: `${data}/runtime`, BACKSTAMP_RUN: run },
-      stdout: "null",
-      stderr: "null",
-    }).spawn();
-    const browser = await chromium.launch({ executablePath: CHROMIUM, args: ["--no-sandbox"] });
-    try {
-      const page = await browser.newPage();
-      const address = `http://127.0.0.1:${port}/notebooks/survey.ipynb?token=${token}`;
-      await whenUp(() => page.goto(address));
-      await page.waitForFunction("globalThis.Jupyter?.notebook?.kernel?.is_connected?.()", null, {
-        timeout: 60_000, // connected after 5 to 9 s here
-      });
-      await page.evaluate(
-        "Jupyter.notebook.clear_all_output(); Jupyter.notebook.execute_all_cells()",
-      );
-      const done = "Jupyter.notebook.get_cells().filter((c) => c.cell_type === 'code')" +
-        ".every((c) => typeof c.input_prompt_number === 'number')";
-      await page.waitForFunction(done, null, { timeout: 60_000 });
-      await new Promise((go) => setTimeout(go, 2000)); // outputs may come after the count
-      const cells = await page.evaluate("Jupyter.notebook.toJSON().cells") as {
-        cell_type: string;
-        outputs?: { output_type: string }[];
-      }[];
-      const outputs = cells.flatMap((cell) => cell.outputs ?? []);
-      expect(outputs.filter((output) => output.output_type === "error")).toEqual([]);
-      expect(outputs).toHaveLength(8);
-      expect(await page.locator(".output svg").count()).toBeGreaterThan(0);
-      expect(await page.locator(".output table").count()).toBeGreaterThan(3);
-    } finally {
-      await browser.close();
-      server.kill("SIGTERM");
-      await server.status;
-      await Deno.remove(data, { recursive: true });
-      await Deno.remove(folder, { recursive: true });
-    }
-  });
+  it.runIf(havePage)(
+    "opens notebooks/survey.ipynb, runs all its cells, and Stop keeps their variables",
+    async () => {
+      const data = await Deno.makeTempDir();
+      const run = await demoRun(data);
+      // a copy, as the page saves by itself; inside the repository, whose import map it needs
+      await Deno.mkdir("out", { recursive: true });
+      const folder = await Deno.realPath(await Deno.makeTempDir({ dir: "out" }));
+      await Deno.copyFile("notebooks/survey.ipynb", `${folder}/survey.ipynb`);
+      await Deno.mkdir(`${data}/kernels/backstamp`, { recursive: true });
+      const spec = JSON.stringify(kernelSpec(Deno.version.deno));
+      await Deno.writeTextFile(`${data}/kernels/backstamp/kernel.json`, spec);
+      const [[port], token] = [freePorts(1), crypto.randomUUID()];
+      const server = new Deno.Command(NOTEBOOK, {
+        args: [
+          "--no-browser",
+          "--ip=127.0.0.1",
+          `--port=${port}`,
+          "--port-retries=0",
+          "--allow-root",
+          `--NotebookApp.token=${token}`,
+          `--notebook-dir=${folder}`,
+        ],
+        env: { JUPYTER_DATA_DIR: data, JUPYTER_RUNTIME_DIR: `${data}/runtime`, BACKSTAMP_RUN: run },
+        stdout: "null",
+        stderr: "null",
+      }).spawn();
+      const browser = await chromium.launch({ executablePath: CHROMIUM, args: ["--no-sandbox"] });
+      try {
+        const page = await browser.newPage();
+        const address = `http://127.0.0.1:${port}/notebooks/survey.ipynb?token=${token}`;
+        await whenUp(() => page.goto(address));
+        await page.waitForFunction("globalThis.Jupyter?.notebook?.kernel?.is_connected?.()", null, {
+          timeout: 60_000, // connected after 5 to 9 s here
+        });
+        await page.evaluate(
+          "Jupyter.notebook.clear_all_output(); Jupyter.notebook.execute_all_cells()",
+        );
+        const done = "Jupyter.notebook.get_cells().filter((c) => c.cell_type === 'code')" +
+          ".every((c) => typeof c.input_prompt_number === 'number')";
+        await page.waitForFunction(done, null, { timeout: 60_000 });
+        await new Promise((go) => setTimeout(go, 2000)); // outputs may come after the count
+        const cells = await page.evaluate("Jupyter.notebook.toJSON().cells") as {
+          cell_type: string;
+          outputs?: { output_type: string }[];
+        }[];
+        const outputs = cells.flatMap((cell) => cell.outputs ?? []);
+        expect(outputs.filter((output) => output.output_type === "error")).toEqual([]);
+        expect(outputs).toHaveLength(8);
+        expect(await page.locator(".output svg").count()).toBeGreaterThan(0);
+        expect(await page.locator(".output table").count()).toBeGreaterThan(3);
+        const execute = (code: string) =>
+          page.evaluate(`{
+          const { notebook } = Jupyter;
+          notebook.insert_cell_at_bottom("code");
+          const cell = notebook.get_cell(notebook.ncells() - 1);
+          cell.set_text(${JSON.stringify(code)});
+          cell.execute();
+        }`);
+        await execute("while (true);");
+        await new Promise((go) => setTimeout(go, 1000)); // the loop runs by then
+        await page.evaluate("Jupyter.notebook.kernel.interrupt()");
+        await execute("`still ${run.rows.length} rows`");
+        await page.waitForFunction(
+          'document.querySelector(".cell:last-of-type .output_text")?.innerText.includes("still ")',
+          null,
+          { timeout: 30_000 },
+        );
+      } finally {
+        await browser.close();
+        server.kill("SIGTERM");
+        await server.status;
+        await Deno.remove(data, { recursive: true });
+        await Deno.remove(folder, { recursive: true });
+      }
+    },
+  );
 });
 
 async function whenUp(open: () => Promise<unknown>): Promise<void> {
