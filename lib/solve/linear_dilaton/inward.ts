@@ -96,7 +96,7 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
     const followed = [
       ...(T < 0 ? ["gap"] : []),
       ...(falling || Ep === 0 ? ["E"] : []),
-      ...(engine.dense ? ["X", "lngtt"] : []),
+      ...(engine.dense ? (E > 1e-12 ? ["X", "lngtt"] : ["X"]) : []), // ln E has no series at E = 0
     ];
     const safe = walker.expand(followed);
     if (!(safe > 0)) return { end: "gave-up", why: "the step shrank to nothing", steps };
@@ -117,6 +117,7 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
         (s) => engine.taken(form, walker, s),
       );
       const at = walker.outputs();
+      if (zero) engine.forget(before); // dense output ends short of ln E = -infinity
       if (zero || x(at.E!) > Ep) return { end: zero ? "zero" : "throat", at, steps, walker };
       engine.forget(before); // the zero lay beyond the critical locus: go on in smaller steps
       walker.place(t, state);
