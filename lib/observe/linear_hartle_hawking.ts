@@ -90,7 +90,7 @@ export function linearHartleHawking<T>(
       return refused("below-critical: the mass is below that of every regular horizon");
     }
     const root = refine(engine, c, wanted.m, guess);
-    if (!root) return failed("step-limit: the asymptotic region was not reached from the horizon");
+    if (!root) return failed("step-limit: the horizon of this mass was not found to round-off");
     ({ Eh, excess } = root);
     if (input.mass === undefined) m = wanted.m;
   }
@@ -119,23 +119,33 @@ export function linearHartleHawking<T>(
   };
 }
 
-/** Newton steps from the double root, with its slope, until the mass agrees in this arithmetic. */
+/**
+ * Secant steps from the double root until the mass agrees to this arithmetic's round-off. Near the critical
+ * mass the slope dm/dE_h vanishes at the root and round-off in m is magnified: the search may end there only
+ * if its steps have come down to epsilon^0.6.
+ */
 function refine<T>(
   engine: Engine<T>,
   c: LinearConstants<T>,
   m: T,
   guess: Extract<HorizonRoot, { found: true }>,
 ) {
-  const A = engine.arithmetic, x = A.toNumber;
-  let Eh = A.from(guess.at), far = fromHorizon(engine, c, Eh), before = Infinity;
+  const A = engine.arithmetic, x = A.toNumber, noise = Math.exp(0.6 * Math.log(A.epsilon));
+  let Eh = A.from(guess.at), slope = guess.slope, before = Infinity;
+  let far = fromHorizon(engine, c, Eh);
   for (let i = 0; far && i < SETTINGS.rounds; i++) {
-    const step = A.div(A.sub(far.m, m), A.from(guess.slope)), size = Math.abs(x(step));
-    if (size <= A.epsilon * Math.abs(x(Eh)) || (i > 1 && size > before / 2)) break; // down to round-off
+    const excess = A.sub(far.m, m), step = A.div(excess, A.from(slope));
+    const size = Math.abs(x(step)) / Math.abs(x(Eh));
+    if (size <= A.epsilon || (size < noise && size > before / 2)) return { Eh, excess: far.excess };
     before = size;
-    Eh = A.sub(Eh, step);
-    far = fromHorizon(engine, c, Eh);
+    const next = A.sub(Eh, step), moved = fromHorizon(engine, c, next);
+    if (moved) slope = x(A.div(A.sub(moved.m, far.m), A.neg(step)));
+    [Eh, far] = [next, moved];
+    if (!Number.isFinite(slope) || slope === 0) {
+      return size < noise && far ? { Eh, excess: far.excess } : undefined;
+    }
   }
-  return far && { Eh, excess: far.excess };
+  return undefined;
 }
 
 function singular<T>(A: Engine<T>["arithmetic"], lambda: T, Ec: T, mass?: T): Solution<T> {

@@ -82,7 +82,7 @@ export function outward<T>(
       walker.place(from.time(), from.state());
       form = next;
     }
-    const safe = walker.expand(engine.dense ? ["E", "X"] : ["E"]),
+    const safe = walker.expand(engine.dense ? ["E", "X", "lngtt"] : ["E"]),
       left = Math.log(end / x(o.X!)) + 0.125;
     if (!(safe > 0)) return undefined;
     const h = Math.min(safe, Math.max(left, 0.125));
