@@ -12,13 +12,14 @@
  * @param from Index of the row's first coefficient.
  * @param N Order.
  * @param target tolerance * size.
- * @returns The step in the table's unit, Infinity for a polynomial.
+ * @returns The step in the table's unit, Infinity for a polynomial, NaN if a coefficient is not finite.
  */
 export function stepOf(C: Float64Array, from: number, N: number, target: number): number {
-  let out = Infinity;
+  let out = Infinity, range = 0;
+  for (let n = 1; n <= N; n++) range += 0 * C[from + n]!; // NaN if any coefficient left the range
+  if (range !== 0) return NaN;
   for (let n = N - 1; n <= N; n++) {
     const c = Math.abs(C[from + n]!);
-    if (!Number.isFinite(c)) return NaN;
     if (c > 0) out = Math.min(out, Math.exp(Math.log(target / c) / n));
   }
   return out;
