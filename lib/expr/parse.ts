@@ -7,6 +7,7 @@
  * power   = atom [ "^" exponent ]          exponent = atom | "-" is only allowed inside brackets
  * atom    = number | name | function "(" sum ")" | "(" sum ")"
  * number  = digits [ "." digits ] [ ("e" | "E") [sign] digits ]      read as an exact rational
+ * d       = "d(" sum { "," name } ")"                                in audits: derivative of sum
  * name    = letter { letter | digit | "_" }                          ASCII only
  * ```
  *
@@ -39,6 +40,8 @@ export const LIMITS = {
   nodes: 5_000,
   /** magnitude of an exact exponent */
   exponent: 64n,
+  /** names in one derivative */
+  derivatives: 8,
   /** digits of a literal, and the magnitude of its decimal exponent */
   digits: 400,
   /** magnitude of numerator and denominator of an exact constant, also of a folded one */
@@ -62,9 +65,13 @@ function fail(text: string, at: number, must: string, got: string): never {
   );
 }
 
-function tokens(text: string): Token[] {
+/** Takes the derivative of an expression with respect to names, one after the other. */
+export type Derivation = (e: Expr, names: readonly string[]) => Expr;
+
+function tokens(text: string, commas: boolean): Token[] {
   const out: Token[] = [];
-  const pattern = /\s+|(\d+(?:\.\d+)?(?:[eE][+-]?\d+)?)|([A-Za-z][A-Za-z0-9_]*)|([-+*/^()])/y;
+  const number = "(\\d+(?:\\.\\d+)?(?:[eE][+-]?\\d+)?)", name = "([A-Za-z][A-Za-z0-9_]*)";
+  const pattern = new RegExp(`\\s+|${number}|${name}|([-+*/^()${commas ? "," : ""}])`, "y");
   while (pattern.lastIndex < text.length) {
     const at = pattern.lastIndex;
     const m = pattern.exec(text);
@@ -98,6 +105,7 @@ function literal(text: string, t: Token): Expr {
  * Reads one expression.
  *
  * @param text Plain mathematical notation, see the grammar of this module.
+ * @param derivation What `d(sum, name, ...)` means; without it there are no derivatives in the text.
  * @returns The tree; exact constants are folded, nothing else is changed.
  * @throws {SyntaxError} if the text is not an expression or passes a limit; the message has the character.
  * @example Powers bind tighter than a sign
@@ -106,11 +114,11 @@ function literal(text: string, t: Token): Expr {
  * if (!isNum(parse("-2^2 + 8/2"), 0)) throw new Error("not zero");
  * ```
  */
-export function parse(text: string): Expr {
+export function parse(text: string, derivation?: Derivation): Expr {
   if (text.length > LIMITS.length) {
     fail(text, 0, `it may have at most ${LIMITS.length} characters`, `${text.length} characters`);
   }
-  const list = tokens(text);
+  const list = tokens(text, derivation !== undefined);
   let i = 0, nodes = 0, depth = 0;
   const peek = () => list[i]?.text;
   const count = (e: Expr): Expr => {
@@ -197,11 +205,26 @@ export function parse(text: string): Expr {
       expect(")");
       return count(call(t.text as FunctionName, inner));
     }
+    if (derivation && t.text === "d" && peek() === "(") return derivative(derivation);
     if (FORBIDDEN.has(t.text)) fail(text, t.at, "this word is reserved", t.text);
     if (peek() === "(") {
       fail(text, t.at, `a function must be one of ${FUNCTIONS.join(", ")}`, t.text);
     }
     return count(sym(t.text));
+  };
+  const derivative = (take: Derivation): Expr => {
+    expect("(");
+    const inner = sum(), by: string[] = [];
+    for (expect(","); by.length < LIMITS.derivatives; i++) {
+      const t = list[i++];
+      if (t?.kind !== "name") {
+        fail(text, t?.at ?? text.length, "a name must follow", t ? `"${t.text}"` : "the end");
+      }
+      by.push(t.text);
+      if (peek() !== ",") break;
+    }
+    expect(")");
+    return count(take(inner, by));
   };
   const out = sum();
   const rest = list[i];
