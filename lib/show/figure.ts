@@ -131,7 +131,10 @@ function raised(svg: string): string {
     const shift = mark === "^" ? -0.4 : 0.25; // of the font size
     const small = `<tspan dy="${shift}em" font-size="72%">${part}</tspan>`;
     // The shift is undone in ems of the full size: 0.72 of the small span's.
-    return next === "" ? small : `${small}<tspan dy="${-shift * 0.72}em">${next}</tspan>`;
+    // a plain space at the edge of a part is dropped by some readers of SVG
+    return next === ""
+      ? small
+      : `${small}<tspan dy="${-shift * 0.72}em">${next.replace(/^ /, "\u00a0")}</tspan>`;
   }
 }
 

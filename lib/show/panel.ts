@@ -120,7 +120,7 @@ function head(options: PanelOptions): string {
   );
   const letter = options.letter === ""
     ? ""
-    : `<tspan font-weight="bold">${options.letter}</tspan><tspan>\u2002</tspan>`;
+    : `<tspan font-weight="bold">${options.letter}\u00a0\u00a0</tspan>`;
   const at = `x="${options.margins.left}" y="${options.margins.top - 5}"`;
   return `<text ${at} font-size="${FONT_SIZE}" aria-label="y-axis label">${letter}${
     words.join("")
