@@ -52,7 +52,9 @@ export function combine(
   const more = other.evidence as Record<string, number | DoubleDouble | undefined>;
   for (const [name, value] of Object.entries(wide.evidence)) {
     const gap = more[name] === undefined ? Infinity : difference(more[name]!, value);
-    evidence[name] = bounded(value, gap, evidenceSize(name, input), c);
+    // the two runs may meet a locus after different steps: what they differ by is the bound
+    const ratio = name === "throat_condition" ? 1 : c.ratio;
+    evidence[name] = bounded(value, gap, evidenceSize(name, input), { ...c, ratio });
   }
   return { numbers, evidence };
 }

@@ -140,6 +140,16 @@ describe("At the edges", () => {
     expect(Math.abs(ln / (-4e60 / (1.1 * 1.1 - 1)) - 1)).toBeLessThan(1e-12); // round-off of 1.1^2 - 1
   });
 
+  it("a bath whose pressure changes sign on the way in does not stop the solver (T = 0 far out)", () => {
+    const row = {
+      model: "cghs",
+      state: "thermal",
+      kappa: 0.160162965539838,
+      mass: 0.00266203725264856,
+    } as const;
+    expect(kindOf({ ...row, bathRatioMinusOne: 0.999168206940886 - 1 })).toBe("naked-singularity");
+  });
+
   it("a tolerance that double precision cannot meet fails with a reason", () => {
     const r = solved({ model: "cghs", state: "boulware", kappa: 1, mass: 10, tolerance: 1e-18 });
     expect(r.outcome).toBe("failed");

@@ -30,6 +30,9 @@ export type LinearEnd<T> =
   }
   | { readonly end: "gave-up"; readonly why: string; readonly steps: number };
 
+/** e-folds of -g_tt before a throat from which on it is watched for. */
+export const NEAR = 7;
+
 /** Sizes below which the unknowns of the u-form need no relative accuracy. */
 export function floorsOf(kappa: number): Readonly<Record<string, number>> {
   return { F: 1, w: 1e-6 * kappa, v: 1e-6 * kappa, gap: 1, lngtt: 1, E: 1e-3 };
@@ -93,8 +96,10 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
       walker.place(from.time(), from.state());
       form = next;
     }
+    // ln(-T) has no series where T passes zero, so the gap to a throat is followed only where it is small
+    const gap = T < 0 ? Math.log(X / -T) : Infinity, near = gap < NEAR;
     const followed = [
-      ...(T < 0 ? ["gap"] : []),
+      ...(near ? ["gap"] : []),
       ...(falling || Ep === 0 ? ["E"] : []),
       ...(engine.dense ? (E > 1e-12 ? ["X", "lngtt"] : ["X"]) : []), // ln E has no series at E = 0
     ];
@@ -103,7 +108,8 @@ export function inward<T>(engine: Engine<T>, p: FarProblem<T>, own: Parameters<T
     let h = -Math.min(safe, T < 0 || X > 1e-30 ? 64 : 1e300);
     if (falling && safe > 64) h = -Math.min(-h, reach(walker, "E", E));
     if (falling && Ep > 0) { while (!(walker.series("E", h) >= 0.25 * E)) h /= 2; }
-    const turns = T < 0 && walker.series("gap", h) <= 0;
+    if (!near) h = -Math.min(-h, gap / 2); // no step passes a throat unseen: X falls about as e^u
+    const turns = near && walker.series("gap", h) <= 0;
     if (turns) h = zeroBetween((s) => walker.series("gap", s), h);
     // without a critical locus E falls to zero before it could turn, or it turns before
     const zero = Ep === 0 && walker.series("E", h) <= 0;

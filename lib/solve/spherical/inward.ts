@@ -9,6 +9,7 @@ import { land } from "../land.ts";
 import { followToLocus } from "../naked.ts";
 import { reach, type Walker } from "../series/walker.ts";
 import { SETTINGS } from "../settings.ts";
+import { NEAR } from "../linear_dilaton/inward.ts";
 import { farSeries } from "./far_series.ts";
 import { type Cavity, wallData } from "./wall.ts";
 
@@ -81,8 +82,10 @@ export function inward<T>(engine: Engine<T>, p: SphericalProblem<T>): SphericalE
       engine.forget(before);
       tried = rootB + 0.8 * (r - rootB);
     }
+    // ln(-T) has no series where T passes zero, so the gap to a throat is followed only where it is small
+    const gap = T < 0 && !negative ? x(o.lngtt!) - Math.log(-T) : Infinity, near = gap < NEAR;
     const followed = [
-      ...(T < 0 && !negative ? ["gap"] : []),
+      ...(near ? ["gap"] : []),
       ...(falling ? ["r"] : []),
       ...(engine.dense ? ["g", "r"] : []),
     ];
@@ -91,7 +94,8 @@ export function inward<T>(engine: Engine<T>, p: SphericalProblem<T>): SphericalE
     let h = -safe;
     if (falling && safe > 64) h = -Math.min(-h, reach(walker, "r", r));
     if (falling) { while (!(walker.series("r", h) >= 0.5 * r)) h /= 2; }
-    if (T < 0 && !negative && walker.series("gap", h) <= 0) {
+    if (!near && gap < Infinity) h = -Math.min(-h, gap / (2 * Math.abs(walker.slope("lngtt"))));
+    if (near && walker.series("gap", h) <= 0) {
       land(walker, "gap", h, followed, (s) => engine.taken(form, walker, s));
       return { end: "throat", at: walker.outputs(), form, walker, steps };
     }
