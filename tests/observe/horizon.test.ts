@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { recordOf, type ShortRow, valueOf } from "./solved.ts";
+import { profileOfRow, recordOf, type ShortRow, valueOf } from "./solved.ts";
 
 interface Action {
   readonly Hp: number;
@@ -36,6 +36,29 @@ describe("A regular horizon", () => {
       // the pair is linear in (2q p, s), so R does not depend on the normalisation of time
       const det = Hp * Hp - row.kappa * K, s = (Vp * Hp - 2 * K * V) / det;
       expect(Math.abs(-s / numbers.curvature_locus!.value - 1)).toBeLessThan(1e-13); // round-off of the determinant
+    });
+
+    it(`is approached with rho' -> q = 2 pi T and dphi/d(-g_tt) -> p/2q: ${JSON.stringify(row)}`, () => {
+      const { profile, result: { numbers } } = profileOfRow(row);
+      const { sigma, rho, dilaton, minus_gtt } = profile;
+      const phi = numbers.dilaton_locus!.value,
+        s = -numbers.curvature_locus!.value,
+        q = 2 * Math.PI * numbers.temperature_horizon!.value;
+      const { Hp, V } = action(row, phi), p = (V - row.kappa * s / 2) / (2 * q * Hp);
+      const errors = (g: number) => {
+        const i = minus_gtt.findIndex((x) => x < g), j = i - 1;
+        const slope = (rho[j]! - rho[i]!) / (sigma[j]! - sigma[i]!);
+        return [
+          Math.abs(slope / q - 1) / minus_gtt[i]!,
+          Math.abs((dilaton[i]! - phi) / minus_gtt[i]! * 2 * q / p - 1) / minus_gtt[i]!,
+        ];
+      };
+      // both differences are of first order in -g_tt: their ratios to it tend to constants
+      const near = errors(1e-4), far = errors(1e-3);
+      for (const k of [0, 1]) {
+        expect(near[k]! * 1e-4).toBeLessThan(1e-3); // the next order with its factor
+        expect(Math.abs(near[k]! / far[k]! - 1)).toBeLessThan(0.3); // unequal steps of the slope, next order
+      }
     });
 
     it(`has bath and horizon at one temperature: ${JSON.stringify(row)}`, () => {

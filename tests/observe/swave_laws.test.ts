@@ -12,8 +12,13 @@ describe("The s-wave throat without a bath", () => {
   });
 
   it("lies at 2M + (b/8M)[ln(16 M^2/b) + 3/2], b = kappa/pi (derived here)", () => {
-    const b = 1e-5, excess = valueOf(throat(b), "dilaton_locus") - 2;
-    expect(Math.abs(excess / (b / 8 * (Math.log(16 / b) + 1.5)) - 1)).toBeLessThan(1e-4); // terms of order b ln b
+    const defect = (b: number) =>
+      Math.abs(
+        (valueOf(throat(b), "dilaton_locus") - 2) / (b / 8 * (Math.log(16 / b) + 1.5)) - 1,
+      );
+    expect(defect(1e-5)).toBeLessThan(1e-4); // terms of order b ln b
+    const order = Math.log10(defect(1e-4) / defect(1e-5));
+    expect(Math.abs(order - 1)).toBeLessThan(0.15); // linear in b, with a logarithm
   });
 
   it("obeys e^{2 rho} = b rho'^2 exactly", () => {
