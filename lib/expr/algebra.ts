@@ -4,6 +4,7 @@
  *
  * @module
  */
+import { expandedTerms } from "./expanded.ts";
 import { mathjsDerivative, neutral } from "./precise.ts";
 import { normalForm } from "./normal.ts";
 import { parse } from "./parse.ts";
@@ -32,6 +33,7 @@ export interface AlgebraOptions extends WitnessOptions {
 }
 
 const LONGEST = 4096; // characters; the algebra system is quadratic in length (2.3 s at 10 kB)
+const MOST_TERMS = 2000; // after expansion; (a+b+c+d)^60 with 40 thousand terms does not end in a minute
 /** Its stand-ins for e and other irrationals: a result with one of them is no longer exact. */
 const LOSSY = /119696244|325368125|131836323|NaN|Infinity|undefined/;
 
@@ -53,6 +55,9 @@ export async function proposal(
     return undefined;
   };
   if (text.length > LONGEST) return discard("", `not asked: over ${LONGEST} characters`);
+  if (op !== "diff" && expandedTerms(tree) > MOST_TERMS) {
+    return discard("", `not asked: over ${MOST_TERMS} terms when expanded`);
+  }
   const answer = await propose({ op, text, ...(name === undefined ? {} : { name: to(name) }) });
   if ("error" in answer) return discard(answer.error, "the algebra system gave an error");
   if (LOSSY.test(answer.text)) return discard(answer.text, "not exact");

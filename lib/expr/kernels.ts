@@ -48,7 +48,7 @@ export class Kernels extends Quotients {
       case "mul":
         return this.product(this.form(e.a), this.form(e.b));
       case "div":
-        return this.product(this.form(e.a), this.inverse(this.form(e.b)));
+        return this.product(this.form(e.a), this.reciprocal(e.b));
       case "pow": {
         if (e.b.kind === "num") return this.power(this.form(e.a), e.b);
         return this.exp(this.product(this.form(e.b), this.log(this.form(e.a))));
@@ -58,6 +58,17 @@ export class Kernels extends Quotients {
         if (e.fn === "log") return this.log(this.form(e.a));
         return this.power(this.form(e.a), num(1, 2));
     }
+  }
+
+  /** 1/e, factors kept apart. */
+  reciprocal(e: Expr): Quotient {
+    if (e.kind === "neg") return this.product(this.number(num(-1)), this.reciprocal(e.a));
+    if (e.kind === "mul") return this.product(this.reciprocal(e.a), this.reciprocal(e.b));
+    if (e.kind === "div") return this.product(this.form(e.b), this.reciprocal(e.a));
+    if (e.kind === "pow" && e.b.kind === "num" && e.b.q === 1n && e.b.p > 0n) {
+      return this.integer(this.reciprocal(e.a), Number(e.b.p));
+    }
+    return this.inverse(this.form(e));
   }
 
   power(a: Quotient, r: Num): Quotient {

@@ -4,6 +4,7 @@
  *
  * @module
  */
+import { divided } from "./division.ts";
 import * as poly from "./polynomial.ts";
 import { type Polynomial, UNIT } from "./polynomial.ts";
 import { type Num, num } from "./tree.ts";
@@ -118,15 +119,16 @@ export class Quotients {
     return this.cancelled(out.n, all);
   }
 
+  /** Takes factors of the denominator off that divide the numerator. */
   cancelled(n: Polynomial, d: ReadonlyMap<string, Factor>): Quotient {
-    if (n.size < 2 || d.size === 0) return { n, d };
-    const { unit, base } = this.primitive(n);
-    const key = poly.keyOf(base), f = d.get(key);
-    if (!f) return { n, d };
     const less = new Map(d);
-    if (f.power === 1) less.delete(key);
-    else less.set(key, { base: f.base, power: f.power - 1 });
-    return { n: unit, d: less };
+    for (const [key, { base, power }] of d) {
+      let left = power;
+      for (let q; left > 0 && n.size > 1 && (q = divided(n, base, this.budget)); left--) n = q;
+      if (left === 0) less.delete(key);
+      else if (left < power) less.set(key, { base, power: left });
+    }
+    return { n, d: less };
   }
 
   /** n = unit * base, unit one term with positive coefficient, base without common factor. */

@@ -1,4 +1,6 @@
 import { describe, expect, it } from "vitest";
+import { size } from "../../lib/expr/algebra.ts";
+import { expandedTerms } from "../../lib/expr/expanded.ts";
 import { normalForm, normalIsZero } from "../../lib/expr/normal.ts";
 import { parse } from "../../lib/expr/parse.ts";
 import { compare } from "../../lib/expr/verify.ts";
@@ -45,7 +47,41 @@ describe("normalIsZero", () => {
   });
 });
 
+describe("expandedTerms", () => {
+  // (n + k - 1 choose k) terms of a sum of n to the power k
+  it.each([
+    ["x*(y+1)", 2],
+    ["(a+b)^3", 4],
+    ["(a+b+c)^2/(1+x)", 12],
+    ["(a+b+c+d)^60", 39711],
+    ["x^(-2)", 1],
+  ])("counts %s", (text, count) => {
+    expect(expandedTerms(parse(text))).toBe(count);
+  });
+
+  it("stays finite where the number would not", () => {
+    expect(expandedTerms(parse("((((a+b)^64+1)^64+1)^64+1)^64"))).toBe(1e12);
+  });
+});
+
 describe("normalForm", () => {
+  // the text of the form tells whether a factor was taken off
+  it.each([
+    ["(x^2-y^2)/(x+y)", "x - y"],
+    ["(x^3-1)/(x-1)^2", "(x^2 + x + 1)/(x - 1)"],
+    ["(exp(2*x)-y)/(exp(x)-sqrt(y))", "exp(x) + sqrt(y)"],
+    ["(x*y^2-x)/(x*y+x)^2", "(y - 1)/(x*(y + 1))"],
+  ])("divides %s out", async (text, right) => {
+    const form = normalForm(parse(text));
+    expect(size(form)).toBeLessThanOrEqual(size(parse(right)) + 4);
+    expect((await compare(form, parse(right), { count: 8 })).outcome).toBe("agree");
+  });
+
+  it("does not divide where there is a rest", async () => {
+    const e = parse("(x^2+y^2)/(x+y)");
+    expect((await compare(normalForm(e), e, { count: 8 })).outcome).toBe("agree");
+  });
+
   it.each([
     "exp(-2*phi)*(a+b)/(1+x)+3/(x+1)^2",
     "sqrt(x+y)^3/2-log(3*x)",
