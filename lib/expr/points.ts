@@ -10,6 +10,9 @@ export type Range = readonly [low: number, high: number];
 /** Ranges by name; names without one are drawn from (0.3, 2.3). */
 export type Ranges = Readonly<Record<string, Range>>;
 
+/** The name that is a constant and never drawn. */
+export const PI = "pi";
+
 const DEFAULT: Range = [0.3, 2.3]; // positive, of order one, away from 0 where quotients blow up
 
 /**
@@ -36,7 +39,7 @@ export function uniform(seed: number): () => number {
 /**
  * A stream of random points.
  *
- * @param list Names, in the order in which values are drawn.
+ * @param list Names, in the order in which values are drawn; `pi` is none of them.
  * @param seed Seed of the stream.
  * @param ranges Ranges of names; names without one are drawn from (0.3, 2.3).
  * @returns A function giving the next point, values as decimal texts.
@@ -48,8 +51,10 @@ export function points(
 ): () => Record<string, string> {
   const draw = uniform(seed);
   return () =>
-    Object.fromEntries(list.map((n) => {
-      const [low, high] = ranges[n] ?? DEFAULT;
-      return [n, String(low + (high - low) * draw())];
-    }));
+    Object.fromEntries(
+      list.filter((n) => n !== PI).map((n) => {
+        const [low, high] = ranges[n] ?? DEFAULT;
+        return [n, String(low + (high - low) * draw())];
+      }),
+    );
 }

@@ -12,6 +12,7 @@
 import type { BigNumber, MathNode } from "mathjs";
 import { elementary } from "./elementary.ts";
 import { print } from "./print.ts";
+import { PI } from "./points.ts";
 import {
   add,
   call,
@@ -100,7 +101,7 @@ function evaluator(m: Mathjs, digits: number): Precise {
   const Fine = m.BigNumber.clone({ precision: 2 * digits + 10 });
   const big = (x: string | number | bigint | BigNumber): BigNumber =>
     new Big(typeof x === "bigint" ? x.toString() : x);
-  const zero = big(0), one = big(1);
+  const zero = big(0), one = big(1), pi: BigNumber = Big.acos(-1);
   const small = big(`1e-${Math.ceil(digits / 2)}`);
   const max = (a: BigNumber, b: BigNumber) => a.gt(b) ? a : b;
 
@@ -160,6 +161,7 @@ function evaluator(m: Mathjs, digits: number): Precise {
         }
         case "sym": {
           if (!Object.hasOwn(values, x.name)) {
+            if (x.name === PI) return { value: pi, scale: pi };
             throw new ReferenceError(
               `Cannot evaluate the expression as every name needs a value: current name is ${x.name}`,
             );

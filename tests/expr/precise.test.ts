@@ -13,6 +13,15 @@ describe("precise", () => {
     expect(digits("sqrt(2)")).toBe("1.41421356237309504880168872420969807856967187537695");
   });
 
+  it("knows pi, which no point draws", async () => {
+    const { evaluate } = await precise(60);
+    // OEIS A000796
+    expect(evaluate(parse("pi"), {}).toFixed(50)).toBe(
+      "3.14159265358979323846264338327950288419716939937511",
+    );
+    expect((await compare(parse("pi"), parse("355/113"))).outcome).toBe("differ");
+  });
+
   it("keeps all digits of expm1, log1p and sqrt1pm1 at tiny and small arguments", async () => {
     const low = await precise(40), high = await precise(400);
     for (const fn of ["expm1", "log1p", "sqrt1pm1"]) {
