@@ -44,6 +44,8 @@ export interface JudgeOptions {
   readonly count?: number;
   /** Decimal digits. @default 64 */
   readonly digits?: number;
+  /** Whether a repair of a refuted claim is looked for. @default true */
+  readonly repair?: boolean;
 }
 
 /** Derivatives of fields may have either sign; other names keep their declared range. */
@@ -81,7 +83,7 @@ export async function judgeEquation(
   const reduce = (e: Expr) => claim.onShell ? onShell(e, context.rules, context.jets) : e;
   const left = reduce(sides.left), right = reduce(sides.right);
   const ranges = rangesFor(sub(left, right), context);
-  const how = { seed: 20, count: 20, digits: 64, ...options, ranges };
+  const how = { seed: 20, count: 20, digits: 64, repair: true, ...options, ranges };
   let factor = "", target = right;
   if (claim.upToFactor) {
     factor = await constantRatio(left, right, how) ?? "";
@@ -100,7 +102,7 @@ export async function judgeEquation(
   const p = await precise(how.digits), at = witness.at!;
   const both = [left, right].map((e) => p.evaluate(e, at).toPrecision(15)) as [string, string];
   witness = { ...witness, left: both[0], right: both[1] };
-  const repair = await findRepair({ left, right }, sides, how);
+  const repair = how.repair ? await findRepair({ left, right }, sides, how) : "";
   return { verdict: "refuted", algorithm: "", witness, repair, factor: "", why: "" };
 }
 

@@ -5,50 +5,53 @@
  * @module
  */
 import { parse } from "../../expr/parse.ts";
-import type { SystemText } from "../../expr/lower.ts";
-import { div, type Expr, num, substitute, sym } from "../../expr/tree.ts";
-import { CATALOGUE } from "../../model/catalogue/mod.ts";
-import { inDilaton } from "../../model/form/dilaton.ts";
-import { linearDilaton } from "../../model/form/linear_dilaton.ts";
-import { spherical } from "../../model/form/spherical.ts";
+import { print } from "../../expr/print.ts";
+import { type Expr, substitute, sym } from "../../expr/tree.ts";
+import type { CATALOGUE } from "../../model/catalogue/mod.ts";
 import type { Audit } from "../audit.ts";
+import type { Claim } from "../claim.ts";
 import { Jets } from "../jets.ts";
 import type { Rule } from "../shell.ts";
+import { type Form, formsOf } from "./forms.ts";
 import { functionsAt, threeEquations } from "./solutions.ts";
 
-/** Lines of a system with every earlier line put in, and the rules for the unknowns' derivatives. */
-function unfold(
-  system: SystemText,
-  known: Readonly<Record<string, Expr>>,
-): { lines: Record<string, Expr>; rules: Rule[] } {
+/** Lines of a form with every earlier line put in, and the rules for the unknowns' derivatives. */
+function unfold({ system, known }: Form): { lines: Record<string, Expr>; rules: Rule[] } {
   const lines: Record<string, Expr> = { ...known };
   for (const [name, text] of system.let) lines[name] = substitute(parse(text), lines);
-  const rules = Object.entries(system.derivative).map(([name, text]) => ({
-    name: `d(${name}, ${system.independent})`,
-    by: substitute(parse(text), lines),
-  }));
+  const rules = Object.entries(system.derivative)
+    .filter(([name]) => system.unknowns.includes(name))
+    .map(([name, text]) => ({
+      name: `d(${name}, ${system.independent})`,
+      by: substitute(parse(text), lines),
+    }));
   return { lines, rules };
 }
 
-interface Form {
-  readonly title: string;
-  readonly system: SystemText;
-  /** Names bound before the lines of the system. */
-  readonly known: Readonly<Record<string, Expr>>;
-  /** Constants of the model. */
-  readonly constants: Readonly<Record<string, Expr>>;
-  /** d sigma per independent variable, as text. */
-  readonly pace: string;
-  readonly c: string;
-  readonly ranges: Readonly<Record<string, readonly [number, number]>>;
+/** The unknowns come back from the names of the chart: nothing is left out by using these. */
+function chartClaims({ chart }: Form): Claim[] {
+  if (!chart) return [];
+  const there = Object.fromEntries(
+    Object.entries(chart.names).map(([name, text]) => [name, parse(text)]),
+  );
+  return Object.entries(chart.unknowns).map(([name, text]) => {
+    const logarithm = text.includes("log("); // exp is one to one: without it the claim is rational
+    const side = (e: string) => logarithm ? `exp(2*(${e}))` : e;
+    return {
+      id: `chart-${name}`,
+      statement: `${name} comes back from the names in which the form is rational`,
+      left: side(name),
+      right: side(print(substitute(parse(text), there))),
+      source: "own derivation",
+    };
+  });
 }
 
 function audit(model: string, form: Form): Audit {
-  const { system } = form;
-  const jets = new Jets({ coordinates: [system.independent], fields: system.unknowns });
-  const { lines, rules } = unfold(system, form.known);
+  const { system, chart } = form, x = system.independent;
+  const jets = new Jets({ coordinates: [x], fields: system.unknowns });
+  const { lines, rules } = unfold(form);
   const phi = lines["phi"] ?? sym("phi"), rho = lines["rho"] ?? sym("rho");
-  const x = system.independent;
   return {
     name: `solver ${model} ${form.title}`,
     title: `Solver form of ${model}: ${form.title}`,
@@ -61,98 +64,23 @@ function audit(model: string, form: Form): Audit {
         rho,
         pace: jets.read(form.pace, lines),
       },
-      rules,
+      rules: [
+        ...rules,
+        ...Object.entries(chart?.unknowns ?? {}).map(([name, text]) => ({
+          name,
+          by: substitute(parse(text), form.known),
+        })),
+      ],
       ranges: form.ranges,
     },
-    claims: threeEquations((e) => `(d(${e},${x})/pace)`, form.c, `lib/model/form, ${form.title}`),
+    claims: [
+      ...threeEquations((e) => `(d(${e},${x})/pace)`, form.c, `lib/model/form, ${form.title}`),
+      ...chartClaims(form),
+    ],
   };
 }
 
-/** All solver forms of one catalogue model. */
+/** Audits of all forms in which the solver integrates one catalogue model. */
 export function solverAudits(name: keyof typeof CATALOGUE): Audit[] {
-  const { family, parameters } = CATALOGUE[name];
-  const linear = family === "linear-dilaton";
-  const constants: Record<string, Expr> = linear ? { lambda: num(1) } : {};
-  const f = functionsAt(name, sym("phi"), constants);
-  const e = num(linear ? -1 : 1);
-  const common = {
-    constants,
-    ranges: {
-      phi: linear ? [-1.9, -0.9] : [1.6, 3.1],
-      kappa: [0.1, 0.6],
-      rho: [-0.8, 0.9],
-      chi: [0.3, 1.3],
-      a: [0.1, 1.9],
-      u: [0.9, 1.9],
-      F: [-0.3, 0.9],
-      eps: [0.1, 0.9],
-      y: [0.9, 1.6],
-      v: [-0.2, 0.3],
-      w: [-0.2, 0.2],
-      pi: [3, 3.2],
-      m: [0.6, 1.2],
-      b: [0.02, 0.2],
-      om: [-0.5, 0.5],
-      mu: [-0.5, 0.5],
-      eta: [-0.4, 0.4],
-    } as Record<string, readonly [number, number]>,
-  };
-  const dilaton: Form = {
-    ...common,
-    title: "dilaton as variable",
-    system: inDilaton(parameters),
-    known: { ...f, e },
-    pace: "sigma_phi",
-    c: "2*sqrt(c4/kappa)",
-  };
-  if (linear) {
-    const slope = {
-      cghs: ["0", "0"],
-      rst: ["-1/2", "0"],
-      bpp: ["-1", "1"],
-      solvable: ["a-1", "1-2*a"],
-    };
-    const [h, k] = slope[name as keyof typeof slope].map((t) => parse(t)) as [Expr, Expr];
-    const solvable = name !== "cghs";
-    const jets = new Jets({ coordinates: [], fields: [] });
-    const known = {
-      h,
-      k,
-      hp: jets.at(parse("1+h"), { h }),
-      hk: jets.at(parse("h+k"), { h, k }),
-      delta: jets.at(parse("1+2*h+k"), { h, k }),
-    };
-    return [
-      ...(["outer", "inner"] as const).map((region) =>
-        audit(name, {
-          ...common,
-          title: `far form, ${region}`,
-          system: linearDilaton(region, solvable, parameters),
-          known,
-          pace: "1/2",
-          c: "2*(1-eps)",
-        })
-      ),
-      audit(name, dilaton),
-    ];
-  }
-  const known = { b: div(sym("kappa"), sym("pi")) };
-  return [
-    ...(["empty", "empty-negative", "bath"] as const).map((kind) =>
-      audit(name, {
-        ...common,
-        title: `split form, ${kind}`,
-        system: spherical(kind),
-        known,
-        pace: "1",
-        c: kind === "bath" ? "(1+eta)/(2*m)" : "0",
-        ranges: {
-          ...common.ranges,
-          rho: kind === "empty-negative" ? [0.3, 0.6] : [-0.9, -0.3],
-          m: kind === "empty-negative" ? [-1.2, -0.6] : [0.6, 1.2],
-        },
-      })
-    ),
-    audit(name, dilaton),
-  ];
+  return formsOf(name).map((form) => audit(name, form));
 }
