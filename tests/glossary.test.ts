@@ -2,6 +2,7 @@ import { parse } from "csv-parse/sync";
 import { expect, it } from "vitest";
 import { PARAMETER_COLUMNS } from "../lib/batch/columns.ts";
 import { RESULT_COLUMNS } from "../lib/batch/result_columns.ts";
+import { AUDIT_OPTIONS } from "../lib/cli/audit_options.ts";
 import { EXECUTE_OPTIONS } from "../lib/cli/execute_options.ts";
 import { GRID_OPTIONS } from "../lib/cli/grid_options.ts";
 import { KERNELSPEC_OPTIONS } from "../lib/cli/kernelspec.ts";
@@ -36,7 +37,14 @@ function reasonCodes(): string[] {
 
 const words: Record<string, readonly string[]> = {
   task: Object.keys(JSON.parse(Deno.readTextFileSync("deno.json")).tasks),
-  option: [HELP, ...RUN_OPTIONS, ...GRID_OPTIONS, ...EXECUTE_OPTIONS, ...KERNELSPEC_OPTIONS].map((
+  option: [
+    HELP,
+    ...RUN_OPTIONS,
+    ...GRID_OPTIONS,
+    ...EXECUTE_OPTIONS,
+    ...AUDIT_OPTIONS,
+    ...KERNELSPEC_OPTIONS,
+  ].map((
     { name },
   ) => name)
     .filter((name) => name !== ""),

@@ -22,6 +22,8 @@ export interface Action {
   readonly source: string;
   /** Ranges of phi and the parameters. */
   readonly ranges: Ranges;
+  /** Whether the quantum part is left out. @default false */
+  readonly classical?: boolean;
 }
 
 /** H, K and V left open: what is proved of it holds for every model. */
@@ -78,6 +80,7 @@ export function classical(action: Action): Action {
   const f = action.functions;
   return {
     ...action,
+    classical: true,
     name: `${action.name}, kappa = 0`,
     ...(f ? { functions: { H: off(f.H), K: off(f.K), V: off(f.V) } } : {}),
   };

@@ -14,6 +14,15 @@ export interface Audit {
   readonly title: string;
   readonly context: Context;
   readonly claims: readonly Claim[];
+  /** Equations that were derived on the way, each an expression that vanishes, with what it is. */
+  readonly derived?: Readonly<Record<string, string>>;
+}
+
+/** An audit that was judged. */
+export interface Judged {
+  readonly steps: readonly Step[];
+  /** Derivatives that were taken and confirmed by the second differentiator. */
+  readonly derivatives: number;
 }
 
 /** A claim with its verdict. */
@@ -28,11 +37,10 @@ export interface Step {
  *
  * @throws {Error} if a derivative is not confirmed.
  */
-export async function runAudit(audit: Audit, options: JudgeOptions = {}): Promise<Step[]> {
+export async function runAudit(audit: Audit, options: JudgeOptions = {}): Promise<Judged> {
   const steps: Step[] = [];
   for (const claim of audit.claims) {
     steps.push({ claim, verdict: await judge(claim, audit.context, options) });
   }
-  await audit.context.jets.verify(audit.context.ranges);
-  return steps;
+  return { steps, derivatives: await audit.context.jets.verify(audit.context.ranges) };
 }

@@ -24,6 +24,8 @@ export interface Claim {
   readonly onShell?: boolean;
   /** Whether it is claimed up to a non-zero constant factor. @default false */
   readonly upToFactor?: boolean;
+  /** Convention in which it is stated, if not that of its context. */
+  readonly convention?: string;
 }
 
 /** What names in claims mean. */
@@ -31,6 +33,8 @@ export interface Context {
   readonly jets: Jets;
   /** Names that stand for expressions. */
   readonly bindings: Readonly<Record<string, Expr>>;
+  /** The same in other conventions, by the name of the convention. */
+  readonly restated?: Readonly<Record<string, Readonly<Record<string, Expr>>>>;
   /** The equations of motion, for claims on shell. */
   readonly rules: readonly Rule[];
   /** Ranges from which the witness draws. */
@@ -49,8 +53,10 @@ export interface Equation {
  * @throws {SyntaxError} if a side is not an expression.
  */
 export function equation(claim: Claim, context: Context): Equation {
+  const { convention } = claim;
+  const bindings = convention === undefined ? context.bindings : context.restated![convention]!;
   return {
-    left: context.jets.read(claim.left, context.bindings),
-    right: context.jets.read(claim.right, context.bindings),
+    left: context.jets.read(claim.left, bindings),
+    right: context.jets.read(claim.right, bindings),
   };
 }

@@ -97,10 +97,15 @@ export class Jets {
 
   /** Reads a text in which names of `bindings` stand for expressions and `d(...)` is a derivative. */
   read(text: string, bindings: Readonly<Record<string, Expr>> = {}): Expr {
-    return substitute(
-      parse(text, (e, by) => this.derivative(substitute(e, bindings), by)),
-      bindings,
-    );
+    // a derivative stands under a name of its own until the end: what it holds is not looked up again
+    const held: Record<string, Expr> = {};
+    const settle = (e: Expr) => substitute(substitute(e, bindings), held);
+    let count = 0;
+    return settle(parse(text, (e, by) => {
+      const name = `@${count++}`;
+      held[name] = this.derivative(settle(e), by);
+      return sym(name);
+    }));
   }
 
   /** Euler-Lagrange expression of `lagrangian` for one field: sum of (-D)^I dL/dq_I. */

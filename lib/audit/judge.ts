@@ -4,15 +4,16 @@
  *
  * @module
  */
-import { points } from "../expr/points.ts";
+import type { Discarded } from "../expr/algebra.ts";
+import { parse } from "../expr/parse.ts";
 import { precise } from "../expr/precise.ts";
 import { print } from "../expr/print.ts";
-import { div, type Expr, isNum, mul, names, sub } from "../expr/tree.ts";
+import { type Expr, isNum, mul, names, sub, sym } from "../expr/tree.ts";
 import type { Witness } from "../expr/verify.ts";
 import { decideZero } from "../expr/zero.ts";
 import { type Claim, type Context, type Equation, equation } from "./claim.ts";
 import { partsOf } from "./jets.ts";
-import { recognise } from "./rational.ts";
+import { constantRatio, productRatio } from "./ratio.ts";
 import { onShell } from "./shell.ts";
 import { termsOf } from "./terms.ts";
 
@@ -34,6 +35,8 @@ export interface Verdict {
   readonly factor: string;
   /** Why an undecided claim is undecided, otherwise empty. */
   readonly why: string;
+  /** What the algebra system proposed and was not believed. */
+  readonly discarded: readonly Discarded[];
 }
 
 /** How claims are judged. */
@@ -84,47 +87,40 @@ export async function judgeEquation(
   const left = reduce(sides.left), right = reduce(sides.right);
   const ranges = rangesFor(sub(left, right), context);
   const how = { seed: 20, count: 20, digits: 64, repair: true, ...options, ranges };
-  let factor = "", target = right;
+  let factor = "", target = right, unknown = "";
   if (claim.upToFactor) {
-    factor = await constantRatio(left, right, how) ?? "";
-    if (factor) target = mul(context.jets.read(factor), right);
+    const ratio = await constantRatio(left, right, how);
+    if (ratio.kind === "unknown-constant") unknown = ratio.digits;
+    factor = ratio.kind === "constant" ? ratio.text : productRatio(left, right, ranges) ?? "";
+    if (factor) target = mul(parse(factor, jetName), right);
   }
-  const decision = await decideZero(sub(left, target), how);
+  const discarded: Discarded[] = [];
+  const decision = await decideZero(sub(left, target), { ...how, discarded });
   const { verdict, algorithm } = decision;
   let { witness } = decision;
   if (verdict === "proved" || verdict === "holds-numerically") {
-    return { verdict, algorithm, witness, repair: "", factor, why: "" };
+    return { verdict, algorithm, witness, repair: "", factor, why: "", discarded };
   }
   if (verdict === "undecided") {
     const why = `only ${witness.count} of ${how.count} points lie inside the domain`;
-    return { verdict, algorithm, witness, repair: "", factor: "", why };
+    return { verdict, algorithm, witness, repair: "", factor: "", why, discarded };
+  }
+  if (unknown) {
+    const why =
+      `the left side is ${unknown} times the right one at 5 points, no number that is known`;
+    return { verdict: "undecided", algorithm, witness, repair: "", factor: "", why, discarded };
   }
   const p = await precise(how.digits), at = witness.at!;
   const both = [left, right].map((e) => p.evaluate(e, at).toPrecision(15)) as [string, string];
   witness = { ...witness, left: both[0], right: both[1] };
   const repair = how.repair ? await findRepair({ left, right }, sides, how) : "";
-  return { verdict: "refuted", algorithm: "", witness, repair, factor: "", why: "" };
+  return { verdict: "refuted", algorithm: "", witness, repair, factor: "", why: "", discarded };
 }
+
+/** A derivative in the text of a factor is the name of a jet. */
+const jetName = (e: Expr, by: readonly string[]): Expr => sym(`d(${[print(e), ...by].join(", ")})`);
 
 type How = Required<JudgeOptions> & { ranges: Record<string, readonly [number, number]> };
-
-/** The constant that left/right equals at five points, if it does and is a simple one. */
-async function constantRatio(left: Expr, right: Expr, how: How): Promise<string | undefined> {
-  if (isNum(right, 0)) return undefined;
-  const p = await precise(how.digits), e = div(left, right);
-  const next = points(names(e), how.seed + 1, how.ranges);
-  let first: ReturnType<typeof p.big> | undefined;
-  for (let tries = 0, used = 0; used < 5; tries++) {
-    if (tries > 200) return undefined;
-    const x = p.evaluate(e, next());
-    if (!x.isFinite()) continue;
-    used++;
-    first ??= x;
-    // 30 digits, as for the recognition of the constant
-    if (x.minus(first).abs().gt(first.abs().times("1e-30"))) return undefined;
-  }
-  return first && !first.isZero() ? recognise(first, p) : undefined;
-}
 
 /** A constant factor on a side, or on one term of it, that makes the equation hold. */
 async function findRepair(
@@ -132,8 +128,13 @@ async function findRepair(
   written: Equation,
   how: How,
 ): Promise<string> {
-  const whole = await constantRatio(left, right, how);
-  if (whole) return `left side = ${whole} * right side`;
+  const ratio = await constantRatio(left, right, how);
+  const whole = ratio.kind === "constant" ? ratio.text : productRatio(left, right, how.ranges);
+  if (whole) {
+    const difference = sub(left, mul(parse(whole, jetName), right));
+    const { outcome } = (await decideZero(difference, { ...how, count: 4 })).witness;
+    if (outcome === "agree") return `left side = (${whole}) * right side`;
+  }
   for (const [side, here, other] of [["right", right, left], ["left", left, right]] as const) {
     const list = termsOf(here);
     if (list.length > 24) continue; // a derived expression, not a side somebody wrote
@@ -142,7 +143,12 @@ async function findRepair(
       const needed = sub(other, t.with());
       if (isNum(t.term, 0)) continue;
       const zero = await decideZero(needed, { ...how, count: 4 });
-      const k = zero.witness.outcome === "agree" ? "0" : await constantRatio(needed, t.term, how);
+      const found = await constantRatio(needed, t.term, how);
+      const k = zero.witness.outcome === "agree"
+        ? "0"
+        : found.kind === "constant"
+        ? found.text
+        : "";
       if (k) {
         return `term ${
           print((shown.length === list.length ? shown[i]! : t).term)

@@ -53,20 +53,28 @@ export function lightConeEquations(action: Action = GENERIC): LightConeEquations
     if (field === "p" || field === "m") return jets.euler(lagrangian, field, off);
     return jets.euler(jets.at(lagrangian, off), field);
   };
-  const equations = {
+  const equations = settled(action, jets, {
     p: vary("p"),
     m: vary("m"),
     rho: vary("rho"),
     phi: vary("phi"),
     psi: vary("psi"),
-  };
+  });
   return { jets, bindings, equations };
+}
+
+/** The equations of a classical action have no kappa. */
+function settled<T extends Readonly<Record<string, Expr>>>(action: Action, jets: Jets, all: T): T {
+  if (!action.classical) return all;
+  const off = (e: Expr) => jets.at(substitute(e, { kappa: num(0) }), {});
+  return Object.fromEntries(Object.entries(all).map(([name, e]) => [name, off(e)])) as T;
 }
 
 /** The context of claims on shell in conformal gauge: mixed derivatives by the field equations. */
 export function lightConeContext(action: Action = GENERIC): Context {
   const { jets, bindings, equations } = lightConeEquations(action);
   const psi = { name: "d(psi, xp, xm)", by: jets.read("-2*d(rho,xp,xm)") };
+  const free = action.classical ? "phi" : "psi"; // what the constraints are solved for
   const no = (e: Expr) => substitute(e, { [psi.name]: psi.by });
   const rules = [
     ...solveLinear(
@@ -75,8 +83,8 @@ export function lightConeContext(action: Action = GENERIC): Context {
       jets,
     ),
     psi,
-    ...solveLinear([equations.m], ["d(psi, xp, xp)"], jets),
-    ...solveLinear([equations.p], ["d(psi, xm, xm)"], jets),
+    ...solveLinear([equations.m], [`d(${free}, xp, xp)`], jets),
+    ...solveLinear([equations.p], [`d(${free}, xm, xm)`], jets),
   ];
   return {
     jets,

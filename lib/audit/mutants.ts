@@ -7,7 +7,7 @@
 import { print } from "../expr/print.ts";
 import { add, div, type Expr, isNum, mul, neg, num, rebuild, sub, sym } from "../expr/tree.ts";
 import type { Claim } from "./claim.ts";
-import { derivativeOf, written } from "./written.ts";
+import { derivativeOf, written } from "../expr/written.ts";
 
 /** A claim with one thing changed. */
 export interface Mutant {

@@ -42,13 +42,15 @@ export function staticEquations(action: Action = GENERIC): StaticEquations {
   const state = [{ name: "d(psi, sigma)", by: jets.read("c - 2*d(rho,sigma)") }];
   const put = (e: Expr) => jets.at(onShell(e, state, jets), {});
   const { rho, phi, psi, ell } = variations;
-  const equations = { rho: put(rho), phi: put(phi), psi: put(psi), ell: put(ell) };
+  const kappa: Readonly<Record<string, Expr>> = action.classical ? { kappa: num(0) } : {};
+  const last = (e: Expr) => jets.at(substitute(put(e), kappa), {});
+  const equations = { rho: last(rho), phi: last(phi), psi: last(psi), ell: last(ell) };
   return { jets, lagrangian, bindings, variations, equations };
 }
 
 /**
  * The context of claims about static solutions: rules for phi'', rho'' and psi' and, where `constraint`
- * is asked for, for c, which the constraint gives as a square root.
+ * is asked for, for c, which the constraint gives as a square root (for rho' if kappa = 0).
  */
 export function staticContext(
   action: Action = GENERIC,
@@ -57,14 +59,16 @@ export function staticContext(
   const { jets, bindings, equations } = staticEquations(action);
   const second = solveLinear(
     [equations.rho, equations.phi],
-    ["d(phi, sigma)", "d(rho, sigma)"].map((n) => n.replace(")", ", sigma)")),
+    ["d(phi, sigma, sigma)", "d(rho, sigma, sigma)"],
     jets,
   );
   const rules: Rule[] = [...second, {
     name: "d(psi, sigma)",
     by: jets.read("c - 2*d(rho,sigma)"),
   }];
-  if (options.constraint) {
+  if (options.constraint && action.classical) {
+    rules.push(...solveLinear([equations.ell], ["d(rho, sigma)"], jets));
+  } else if (options.constraint) {
     // kappa c^2/4 is the only place of c in the constraint
     const zero = substitute(equations.ell, { c: num(0) });
     rules.push({

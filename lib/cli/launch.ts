@@ -16,6 +16,8 @@ export interface Grant {
   readonly read: readonly string[];
   /** Files and folders it may write. */
   readonly write: readonly string[];
+  /** Environment variables it may see. */
+  readonly env?: readonly string[];
   /** Facts about the machine it may ask for. */
   readonly sys?: readonly string[];
 }
@@ -50,6 +52,7 @@ function list(paths: readonly string[]): string {
 export async function launch(module: string, grant: Grant, request: unknown): Promise<number> {
   const flags = ["--no-prompt", `--allow-read=${list([ROOT, ...grant.read])}`];
   if (grant.write.length > 0) flags.push(`--allow-write=${list(grant.write)}`);
+  if (grant.env) flags.push(`--allow-env=${grant.env.join(",")}`);
   if (grant.sys) flags.push(`--allow-sys=${grant.sys.join(",")}`);
   return await runDeno([...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)]);
 }

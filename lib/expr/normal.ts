@@ -69,8 +69,10 @@ function tree(kernels: Kernels, a: Quotient): Expr {
     let top: Expr = num(c.p < 0n ? -c.p : c.p), bottom: Expr = num(c.q), inside: Expr = num(0);
     for (let i = 0; i < m.length; i += 2) {
       const g = kernels.generators[m[i]!]!, k = num(m[i + 1]!, UNIT);
-      if (g.kind === "exp") inside = add(inside, mul(k, tree(kernels, g.of)));
-      else {
+      if (g.kind === "exp") {
+        const size = num(k.p < 0n ? -k.p : k.p, k.q), x = mul(size, tree(kernels, g.of));
+        inside = k.p < 0n ? sub(inside, x) : add(inside, x);
+      } else {
         const base: Expr = g.kind === "name"
           ? sym(g.name)
           : g.kind === "prime"

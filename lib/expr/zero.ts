@@ -6,9 +6,12 @@
  */
 import { type AlgebraOptions, proposal } from "./algebra.ts";
 import { normalIsZero } from "./normal.ts";
+import { print } from "./print.ts";
 import type { Ranges } from "./points.ts";
 import { type Expr, isNum, num } from "./tree.ts";
 import { compare, type Witness } from "./verify.ts";
+
+const SELF_CHECK = 20_000; // term operations: milliseconds, enough for what people write
 
 /** A decision about `e = 0`. */
 export interface ZeroDecision {
@@ -28,7 +31,8 @@ export interface ZeroDecision {
  *
  * @param e An expression.
  * @param options Points (20 by default), digits, seed, ranges.
- * @returns The decision; a non-zero value at one point is final, whatever algebra would propose.
+ * @returns The decision; a non-zero value at one point is final, whatever the algebra system would propose.
+ * @throws {Error} if the normal form is 0 where the value is not: that would be a defect of this program.
  * @example A square
  * ```ts
  * import { decideZero, parse } from "@backstamp/backstamp";
@@ -38,10 +42,23 @@ export interface ZeroDecision {
  */
 export async function decideZero(e: Expr, options: AlgebraOptions = {}): Promise<ZeroDecision> {
   const witness = await compare(e, num(0), { count: 20, ...options });
-  if (witness.outcome === "differ") return { verdict: "nonzero", algorithm: "", witness };
+  if (witness.outcome === "differ") {
+    refuse(e, witness, options);
+    return { verdict: "nonzero", algorithm: "", witness };
+  }
   const algorithm = await reachesZero(e, options);
   if (witness.outcome === "no-points") return { verdict: "undecided", algorithm, witness };
   return { verdict: algorithm ? "proved" : "holds-numerically", algorithm, witness };
+}
+
+/** Algebra that reaches zero where numbers do not is a defect of this program, and said so. */
+function refuse(e: Expr, witness: Witness, options: AlgebraOptions): void {
+  const positive = (n: string) => isPositive(n, options.ranges);
+  if (normalIsZero(e, { positive, budget: SELF_CHECK }) !== true) return;
+  throw new Error(
+    `Cannot decide about ${print(e).slice(0, 80)} as algebra and numbers must agree: ` +
+      `algebra reaches 0, the value is ${witness.left} at ${JSON.stringify(witness.at)}`,
+  );
 }
 
 /** Whether a name is drawn from positive values only. */

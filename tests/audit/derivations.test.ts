@@ -11,7 +11,8 @@ describe("Ready audits", () => {
   for (const { make } of readyAudits()) {
     const audit = make();
     it(`prove every claim: ${audit.name}`, async () => {
-      const steps = await runAudit(audit);
+      const { steps, derivatives } = await runAudit(audit);
+      expect(derivatives).toBeGreaterThanOrEqual(0);
       expect(steps.length).toBeGreaterThan(0);
       for (const { claim, verdict } of steps) {
         expect(verdict.verdict, `${claim.id}: ${verdict.why}`).toBe("proved");

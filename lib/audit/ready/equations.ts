@@ -16,6 +16,11 @@ export function staticAudit(action: Action): Audit {
   return {
     name: `static ${action.name}`,
     title: `Static equations of ${action.name}`,
+    derived: {
+      E_rho: "variation of the conformal factor",
+      E_phi: "variation of the dilaton",
+      E_ell: "variation of the lapse: the constraint",
+    },
     context: {
       ...context,
       bindings: {
@@ -94,6 +99,13 @@ export function lightConeAudit(action: Action): Audit {
   return {
     name: `light-cone ${action.name}`,
     title: `Equations of ${action.name} in conformal gauge`,
+    derived: {
+      E_rho: "variation of the conformal factor",
+      E_phi: "variation of the dilaton",
+      E_psi: "variation of the auxiliary field",
+      E_pp: "constraint along x+",
+      E_mm: "constraint along x-",
+    },
     context: lightConeContext(action),
     claims: [
       {

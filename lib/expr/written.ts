@@ -4,9 +4,9 @@
  *
  * @module
  */
-import { parse } from "../expr/parse.ts";
-import { print } from "../expr/print.ts";
-import { type Expr, sym } from "../expr/tree.ts";
+import { parse } from "./parse.ts";
+import { print } from "./print.ts";
+import { type Expr, sym } from "./tree.ts";
 
 /**
  * Reads a text without taking its derivatives.

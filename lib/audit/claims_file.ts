@@ -1,0 +1,138 @@
+/**
+ * Claims files: YAML or JSON, checked against `data/schema/claims.schema.json`. All faults are reported at once,
+ * with line and column.
+ *
+ * @module
+ */
+import { type ErrorObject } from "ajv";
+import { Ajv2020 } from "ajv/dist/2020.js";
+import { isNode, LineCounter, parseDocument } from "yaml";
+import SCHEMA from "../../data/schema/claims.schema.json" with { type: "json" };
+import type { Quantity } from "./conventions.ts";
+
+type Text = string | number;
+type Named<T> = Readonly<Record<string, T>>;
+
+/** A claim as it stands in a file. */
+export interface FileClaim {
+  readonly id: string;
+  readonly statement: string;
+  readonly left: Text;
+  readonly right: Text;
+  readonly source?: string;
+  readonly on_shell?: boolean;
+  readonly up_to_factor?: boolean;
+  readonly convention?: string;
+}
+
+/** What a claims file holds; the schema says what each part means. */
+export interface ClaimsFile {
+  readonly title: string;
+  readonly setting: "static" | "light-cone" | "free";
+  readonly model?: string | {
+    readonly H: Text;
+    readonly K: Text;
+    readonly V: Text;
+    readonly source?: string;
+  };
+  readonly classical?: boolean;
+  readonly solution?: {
+    readonly coordinate: string;
+    readonly pace?: Text;
+    readonly phi: Text;
+    readonly rho: Text;
+    readonly c: Text;
+  };
+  readonly coordinates?: readonly string[];
+  readonly fields?: readonly string[];
+  readonly functions?: Named<string>;
+  readonly rules?: Named<Text>;
+  readonly constants?: readonly string[];
+  readonly ranges?: Named<readonly [number, number]>;
+  readonly define?: Named<Text>;
+  readonly convention?: string;
+  readonly quantities?: Named<Quantity>;
+  readonly seed?: number;
+  readonly claims: readonly FileClaim[];
+}
+
+/** Where in a file something stands. */
+export type Path = readonly (string | number)[];
+
+/** A file that was read, with the places of its parts. */
+export interface ReadClaims {
+  readonly file: ClaimsFile;
+  /** Line and column of a part, or of the nearest part around it. */
+  readonly at: (path: Path) => string;
+}
+
+/** A claims file that cannot be used. */
+export class ClaimsError extends Error {
+  override readonly name = "ClaimsError";
+  /** @param faults Every fault, one line each. */
+  constructor(readonly faults: readonly string[]) {
+    super(faults.join("\n"));
+  }
+}
+
+const LONGEST = 1_000_000; // characters of a claims file
+
+const validate = new Ajv2020({ allErrors: true, strict: true, allowUnionTypes: true })
+  .compile<ClaimsFile>(SCHEMA);
+
+/**
+ * Reads a claims file.
+ *
+ * @param text YAML 1.2, so JSON as well.
+ * @throws {ClaimsError} with every fault of form.
+ */
+export function readClaims(text: string): ReadClaims {
+  if (text.length > LONGEST) {
+    throw new ClaimsError([
+      `Cannot read the claims as the file may have at most ${LONGEST} characters: current length is ${text.length}`,
+    ]);
+  }
+  const lines = new LineCounter();
+  const document = parseDocument(text, { lineCounter: lines, prettyErrors: false, strict: true });
+  const place = (offset: number) => {
+    const { line, col } = lines.linePos(offset);
+    return `line ${line}, column ${col}`;
+  };
+  if (document.errors.length > 0) {
+    throw new ClaimsError(
+      document.errors.map((e) => `Cannot read the claims, ${place(e.pos[0])}: ${e.message}`),
+    );
+  }
+  const at = (path: Path): string => {
+    for (let n = path.length; n >= 0; n--) {
+      const node = n === 0 ? document.contents : document.getIn(path.slice(0, n), true);
+      if (isNode(node) && node.range) return place(node.range[0]);
+    }
+    return place(0);
+  };
+  const file: unknown = document.toJS({ maxAliasCount: 100 });
+  if (!validate(file)) {
+    throw new ClaimsError((validate.errors ?? []).filter(telling).map((e) => fault(e, file, at)));
+  }
+  return { file, at };
+}
+
+/** An error of `oneOf` repeats those of its branches. */
+const telling = (e: ErrorObject) => e.keyword !== "oneOf" && e.keyword !== "propertyNames";
+
+function fault(e: ErrorObject, file: unknown, at: (path: Path) => string): string {
+  const path = e.instancePath.split("/").slice(1)
+    .map((part) => part.replaceAll("~1", "/").replaceAll("~0", "~"))
+    .map((part) => /^\d+$/.test(part) ? Number(part) : part);
+  const value = path.reduce<unknown>((x, key) => (x as Record<string, unknown>)?.[key], file);
+  const extra = e.params["additionalProperty"] as string | undefined;
+  const where = extra === undefined ? at(path) : at([...path, extra]);
+  const what = path.length === 0 ? "the file" : path.join(".");
+  const must = extra !== undefined
+    ? "it must not have the part"
+    : e.keyword === "enum"
+    ? `it must be one of ${(e.params["allowedValues"] as string[]).join(", ")}`
+    : `it ${e.message}`;
+  const now = extra ?? (e.keyword === "required" ? "none" : JSON.stringify(value)?.slice(0, 60));
+  return `Cannot use ${what}, ${where}, as ${must}: current value is ${now}`;
+}
