@@ -14,8 +14,11 @@ export * from "./expr/tree.ts";
 export * from "./expr/parse.ts";
 export type { Operation as AlgebraOperation } from "./expr/nerdamer.ts";
 export { print } from "./expr/print.ts";
+export { tex, texName } from "./expr/tex.ts";
 export { lower, type SystemText } from "./expr/lower.ts";
 export { type AlgebraOptions, differentiate, type Discarded, simplify } from "./expr/algebra.ts";
+export { factor } from "./expr/factor.ts";
+export { integrate } from "./expr/integrate.ts";
 export type { Witness, WitnessOptions } from "./expr/verify.ts";
 export type { Range, Ranges } from "./expr/points.ts";
 export type { Family } from "./model/model.ts";
@@ -52,6 +55,17 @@ export {
   type ClosedFormNumber,
   type ClosedFormResult,
 } from "./solve/closed_form.ts";
+export { ClaimsError, type ClaimsFile, type FileClaim } from "./audit/claims_file.ts";
+export {
+  type Convention,
+  conventionOf,
+  CONVENTIONS,
+  conversion,
+  QUANTITIES,
+  type Quantity,
+} from "./audit/conventions.ts";
+export { type JudgeOptions, type VerdictName, VERDICTS } from "./audit/judge.ts";
+export type { DerivedEquation, Ledger, LedgerPart, LedgerStep } from "./audit/ledger.ts";
 export { SETTINGS } from "./solve/settings.ts";
 export * from "./show/mod.ts";
 export { derive } from "./expr/derive.ts";

@@ -4,55 +4,76 @@
  *
  * @module
  */
-import { type ErrorObject } from "ajv";
+import type { ErrorObject } from "ajv";
 import { Ajv2020 } from "ajv/dist/2020.js";
 import { isNode, LineCounter, parseDocument } from "yaml";
 import SCHEMA from "../../data/schema/claims.schema.json" with { type: "json" };
 import type { Quantity } from "./conventions.ts";
 
-type Text = string | number;
-type Named<T> = Readonly<Record<string, T>>;
-
 /** A claim as it stands in a file. */
 export interface FileClaim {
+  /** Short name, unique in the file. */
   readonly id: string;
+  /** What is claimed, in words. */
   readonly statement: string;
-  readonly left: Text;
-  readonly right: Text;
+  /** Left side, in the grammar of expressions with `d(e, x)` for derivatives. */
+  readonly left: string | number;
+  /** Right side. */
+  readonly right: string | number;
+  /** Where the claim comes from. */
   readonly source?: string;
+  /** Claimed modulo the equations only. @default false */
   readonly on_shell?: boolean;
+  /** Claimed up to a factor that vanishes nowhere. @default false */
   readonly up_to_factor?: boolean;
+  /** Convention in which it is stated. @default that of the file */
   readonly convention?: string;
 }
 
 /** What a claims file holds; the schema says what each part means. */
 export interface ClaimsFile {
+  /** What is audited, in words. */
   readonly title: string;
+  /** Static gauge, conformal gauge, or coordinates and fields of your own. */
   readonly setting: "static" | "light-cone" | "free";
+  /** Catalogue model, `any`, or an action of your own over phi and kappa. */
   readonly model?: string | {
-    readonly H: Text;
-    readonly K: Text;
-    readonly V: Text;
+    readonly H: string | number;
+    readonly K: string | number;
+    readonly V: string | number;
     readonly source?: string;
   };
+  /** Leave the quantum part out. @default false */
   readonly classical?: boolean;
+  /** Fields of a static solution as expressions of one coordinate, held against the equations. */
   readonly solution?: {
     readonly coordinate: string;
-    readonly pace?: Text;
-    readonly phi: Text;
-    readonly rho: Text;
-    readonly c: Text;
+    readonly pace?: string | number;
+    readonly phi: string | number;
+    readonly rho: string | number;
+    readonly c: string | number;
   };
+  /** Setting `free`: coordinates. */
   readonly coordinates?: readonly string[];
+  /** Setting `free`: functions of all coordinates. */
   readonly fields?: readonly string[];
-  readonly functions?: Named<string>;
-  readonly rules?: Named<Text>;
+  /** Setting `free`: open functions, each with what it depends on. */
+  readonly functions?: Readonly<Record<string, string>>;
+  /** Setting `free`: equations on shell. */
+  readonly rules?: Readonly<Record<string, string | number>>;
+  /** Constants besides those of the model. */
   readonly constants?: readonly string[];
-  readonly ranges?: Named<readonly [number, number]>;
-  readonly define?: Named<Text>;
+  /** Open intervals for the numeric witness. */
+  readonly ranges?: Readonly<Record<string, readonly [number, number]>>;
+  /** Abbreviations, each may use those before it. */
+  readonly define?: Readonly<Record<string, string | number>>;
+  /** Convention of the whole file. @default house */
   readonly convention?: string;
-  readonly quantities?: Named<Quantity>;
+  /** Constants and abbreviations that other conventions write with another factor. */
+  readonly quantities?: Readonly<Record<string, Quantity>>;
+  /** Seed of the numeric witness. */
   readonly seed?: number;
+  /** The claims, in order. */
   readonly claims: readonly FileClaim[];
 }
 
@@ -68,10 +89,19 @@ export interface ReadClaims {
 
 /** A claims file that cannot be used. */
 export class ClaimsError extends Error {
+  /** Tells this error from others. */
   override readonly name = "ClaimsError";
-  /** @param faults Every fault, one line each. */
-  constructor(readonly faults: readonly string[]) {
+  /** Every fault, one line each. */
+  readonly faults: readonly string[];
+
+  /**
+   * Makes an error of faults.
+   *
+   * @param faults Every fault, one line each.
+   */
+  constructor(faults: readonly string[]) {
     super(faults.join("\n"));
+    this.faults = faults;
   }
 }
 

@@ -12,15 +12,23 @@ import { VERDICTS } from "./judge.ts";
 
 /** One claim with its verdict. */
 export interface LedgerStep {
+  /** Short name, unique in its part. */
   readonly id: string;
+  /** What is claimed, in words. */
   readonly statement: string;
+  /** Where the claim comes from. */
   readonly source: string;
   /** Convention in which the claim is stated. */
   readonly convention: string;
+  /** Left side as written. */
   readonly left: string;
+  /** Right side as written. */
   readonly right: string;
+  /** Whether it is claimed modulo the equations only. */
   readonly on_shell: boolean;
+  /** Whether it is claimed up to a factor that vanishes nowhere. */
   readonly up_to_factor: boolean;
+  /** The verdict. */
   readonly verdict: VerdictName;
   /** What reached zero; empty if nothing did. */
   readonly algorithm: string;
@@ -34,8 +42,11 @@ export interface LedgerStep {
     readonly left?: string;
     readonly right?: string;
   };
+  /** left = factor * right, for claims up to a factor; otherwise empty. */
   readonly factor: string;
+  /** What would make a refuted claim true; empty if nothing simple was found. */
   readonly repair: string;
+  /** Why an undecided claim is undecided; otherwise empty. */
   readonly why: string;
   /** Proposals of the algebra system that were not believed. */
   readonly discarded: number;
@@ -43,32 +54,43 @@ export interface LedgerStep {
 
 /** An equation that was derived: the expression vanishes. */
 export interface DerivedEquation {
+  /** Name of the expression in claims. */
   readonly name: string;
+  /** What it is, in words. */
   readonly statement: string;
+  /** The expression; it vanishes. */
   readonly expression: string;
 }
 
 /** One audit, judged. */
 export interface LedgerPart {
+  /** Short name. */
   readonly name: string;
+  /** What is audited, in words. */
   readonly title: string;
+  /** Equations that were derived on the way. */
   readonly derived: readonly DerivedEquation[];
   /** Derivatives confirmed by a second differentiator. */
   readonly derivatives: number;
+  /** The claims, in order. */
   readonly steps: readonly LedgerStep[];
 }
 
 /** A whole ledger. */
 export interface Ledger {
+  /** Name of the format. */
   readonly format: "derivation-ledger/1";
+  /** What is audited, in words. */
   readonly title: string;
   /** SHA-256 of the claims file; empty for ready audits. */
   readonly input: string;
   /** Programs that took part, with versions. */
   readonly versions: Readonly<Record<string, string>>;
+  /** How many claims got each verdict. */
   readonly counts: Readonly<Record<VerdictName, number>>;
   /** Conventions that steps are stated in. */
   readonly conventions: readonly Convention[];
+  /** The parts, in order. */
   readonly parts: readonly LedgerPart[];
 }
 

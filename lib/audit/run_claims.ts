@@ -21,18 +21,6 @@ export interface RunClaimsOptions extends JudgeOptions {
  * @param text The file, YAML or JSON; see `data/schema/claims.schema.json`.
  * @param options Seed (the file's own comes first), points, digits.
  * @throws {ClaimsError} with every fault of the file.
- * @example A wrong factor is refuted and its repair found
- * ```ts
- * import { auditClaims } from "@backstamp/backstamp";
- * const { ledger } = await auditClaims(`
- *   title: One line of notes
- *   setting: free
- *   coordinates: [x]
- *   claims: [{ id: slope, statement: slope of a square, left: "d(x^2, x)", right: x }]
- * `);
- * const [step] = ledger.parts[0].steps;
- * if (step.verdict !== "refuted" || step.repair !== "left side = (2) * right side") throw new Error();
- * ```
  */
 export async function runClaims(text: string, options: RunClaimsOptions = {}): Promise<Ledger> {
   const { onPart, ...judge } = options, read = readClaims(text);

@@ -3,7 +3,10 @@
  *
  * @module
  */
+export { auditClaims, auditModel } from "./audit.ts";
 export { boundedText } from "./bounded_text.ts";
+export { LedgerView } from "./ledger_view.ts";
+export { mathMl } from "./math.ts";
 export { DISPLAY, DISPLAY_LIMIT, type Displayable, displayable } from "./notebook/display.ts";
 export * from "./notebook/document.ts";
 export * from "./notebook/kernelspec.ts";
