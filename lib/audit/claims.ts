@@ -9,6 +9,7 @@ import type { Claim } from "./claim.ts";
 import { ClaimsError, type ClaimsFile, type Path, type ReadClaims } from "./claims_file.ts";
 import { type Convention, conventionOf, conversion, type Quantity } from "./conventions.ts";
 import { type Ground, groundOf } from "./ground.ts";
+import { written } from "../expr/written.ts";
 import { faultsOf } from "./names.ts";
 import { lightConeAudit, staticAudit } from "./ready/equations.ts";
 import type { Rule } from "./shell.ts";
@@ -108,6 +109,7 @@ function claimsAudit(
   const { jets } = ground;
   const taken = new Set([...ground.own, ...Object.keys(ground.bindings), "pi", "d"]);
   const fresh = (name: string, path: Path) => {
+    faults.try(path, () => written(name)); // a word that expressions cannot hold
     if (taken.has(name)) faults.add(path, `Cannot declare the name ${name} as it must be new`);
     taken.add(name);
   };

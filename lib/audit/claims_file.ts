@@ -140,7 +140,12 @@ export function readClaims(text: string): ReadClaims {
     }
     return place(0);
   };
-  const file: unknown = document.toJS({ maxAliasCount: 100 });
+  let file: unknown;
+  try {
+    file = document.toJS({ maxAliasCount: 100 });
+  } catch (error) { // aliases that unfold without end
+    throw new ClaimsError([`Cannot read the claims: ${(error as Error).message}`]);
+  }
   if (!validate(file)) {
     throw new ClaimsError((validate.errors ?? []).filter(telling).map((e) => fault(e, file, at)));
   }

@@ -150,9 +150,10 @@ async function findRepair(
         ? found.text
         : "";
       if (k) {
-        return `term ${
-          print((shown.length === list.length ? shown[i]! : t).term)
-        } of the ${side} side taken ${k} times`;
+        const term = print((shown.length === list.length ? shown[i]! : t).term);
+        if (k === "0") return `${side} side without the term ${term}`;
+        if (k === "-1") return `${side} side with the other sign of the term ${term}`;
+        return `${side} side with ${k} times the term ${term}`;
       }
     }
   }

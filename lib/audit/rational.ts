@@ -16,7 +16,10 @@ export function recognise(x: BigNumber, p: Precise): string | undefined {
   const pi = p.big("3.14159265358979323846264338327950288419716939937510582097494459230781640629");
   for (const k of [0, 1, -1, 2, -2]) {
     const text = fraction(x.div(pi.pow(k)), p);
-    if (text !== undefined) return k === 0 ? text : `${text}*pi^${k < 0 ? `(${k})` : k}`;
+    if (text === undefined) continue;
+    if (k === 0) return text;
+    const power = k === 1 ? "pi" : `pi^${k < 0 ? `(${k})` : k}`;
+    return text === "1" ? power : `${text}*${power}`;
   }
   return undefined;
 }

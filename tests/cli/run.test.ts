@@ -1,5 +1,6 @@
 import { afterAll, describe, expect, it } from "vitest";
 import { join } from "node:path";
+import { command } from "./command.ts";
 
 const FOLDER = Deno.makeTempDirSync();
 afterAll(() => Deno.removeSync(FOLDER, { recursive: true }));
@@ -9,23 +10,6 @@ const table = (name: string, text: string) => {
   Deno.writeTextFileSync(path(name), text);
   return path(name);
 };
-
-/** The command as deno.json has it: the launcher may only start a child, which gets narrow permissions. */
-async function command(task: "run" | "grid", ...args: string[]) {
-  const child = new Deno.Command(Deno.execPath(), {
-    args: [
-      "run",
-      "--no-prompt",
-      "--allow-run",
-      "--allow-env=INIT_CWD",
-      `lib/cli/${task}.ts`,
-      ...args,
-    ],
-    env: { PATH: Deno.env.get("PATH") ?? "", NO_COLOR: "1" },
-  });
-  const { code, stdout, stderr } = await child.output(), decoder = new TextDecoder();
-  return { code, text: decoder.decode(stdout) + decoder.decode(stderr) };
-}
 
 const ROWS = table(
   "rows.csv",
