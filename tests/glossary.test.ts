@@ -1,5 +1,8 @@
 import { parse } from "csv-parse/sync";
 import { expect, it } from "vitest";
+import CLAIMS from "../data/schema/claims.schema.json" with { type: "json" };
+import { CONVENTIONS } from "../lib/audit/conventions.ts";
+import { VERDICTS } from "../lib/audit/judge.ts";
 import { PARAMETER_COLUMNS } from "../lib/batch/columns.ts";
 import { RESULT_COLUMNS } from "../lib/batch/result_columns.ts";
 import { AUDIT_OPTIONS } from "../lib/cli/audit_options.ts";
@@ -58,6 +61,9 @@ const words: Record<string, readonly string[]> = {
   "validity code": ["inside", ...VALIDITY_CODES],
   "reason code": reasonCodes(),
   "figure title": FIGURE_TITLES,
+  verdict: VERDICTS,
+  setting: CLAIMS.properties.setting.enum,
+  convention: CONVENTIONS.map(({ name }) => name),
 };
 
 it("lists every word that commands, tables and figures use, and no word that they do not use", () => {

@@ -230,6 +230,20 @@ describe("A verdict", () => {
   });
 });
 
+describe("The claims files that come with the program", () => {
+  it("are proved, the one in README included", async () => {
+    const [, block] = /```yaml\n([\s\S]*?)```/.exec(Deno.readTextFileSync("README.md"))!;
+    const texts = [...Deno.readDirSync("data/claims")].map(({ name }) =>
+      Deno.readTextFileSync(`data/claims/${name}`)
+    );
+    expect(texts.length).toBeGreaterThan(0);
+    for (const text of [block!, ...texts]) {
+      const { counts, parts } = await runClaims(text);
+      expect(counts.proved).toBe(parts.flatMap((part) => part.steps).length);
+    }
+  });
+});
+
 describe("The ledger of the ready audits", () => {
   it("has the form of its schema and does not depend on the number of workers", async () => {
     const about = { title: "t", input: "", versions: {} };
