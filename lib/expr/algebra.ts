@@ -34,7 +34,8 @@ export interface AlgebraOptions extends WitnessOptions {
 
 const LONGEST = 4096; // characters; the algebra system is quadratic in length (2.3 s at 10 kB)
 const MOST_TERMS = 50; // after expansion; (a/7+2*b/3)^48 takes 4 s, (a+b+c)^16 with 153 terms over 10 s
-const MOST_NODES = 25; // for simplify; under 3 s up to here in 2000 random expressions, 20 s and more from 35 on
+/** Of simplify and factor; simplify took under 3 s up to here in 2000 random expressions, over 20 s from 35 on. */
+const MOST_NODES = 25;
 /** Its stand-ins for e and other irrationals: a result with one of them is no longer exact. */
 const LOSSY = /119696244|325368125|131836323|NaN|Infinity|undefined/;
 
@@ -59,7 +60,7 @@ export async function proposal(
   if (op !== "diff" && expandedTerms(tree) > MOST_TERMS) {
     return discard("", `not asked: over ${MOST_TERMS} terms when expanded`);
   }
-  if (op === "simplify" && size(tree) > MOST_NODES) {
+  if ((op === "simplify" || op === "factor") && size(tree) > MOST_NODES) {
     return discard("", `not asked: over ${MOST_NODES} nodes`);
   }
   const answer = await propose({ op, text, ...(name === undefined ? {} : { name: to(name) }) });

@@ -12,6 +12,7 @@
 import type { BigNumber, MathNode } from "mathjs";
 import { elementary } from "./elementary.ts";
 import { print } from "./print.ts";
+import { shared } from "./shared.ts";
 import { PI } from "./points.ts";
 import {
   add,
@@ -211,7 +212,7 @@ function evaluator(m: Mathjs, digits: number): Precise {
         }
       }
     };
-    return walk(e);
+    return walk(shared(e));
   };
   return {
     digits,
