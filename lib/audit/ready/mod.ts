@@ -5,6 +5,12 @@
  */
 import { CATALOGUE } from "../../model/catalogue/mod.ts";
 import { actionOf, GENERIC } from "../action.ts";
+import {
+  anomalyActionAudit,
+  anomalyDeSitterAudit,
+  anomalySchwarzschildAudit,
+  contentAudit,
+} from "./anomaly4d.ts";
 import type { Audit } from "../audit.ts";
 import { lightConeAudit, staticAudit } from "./equations.ts";
 import { killingAudit, killingModelAudit, liouvilleAudit, reductionAudit } from "./geometry.ts";
@@ -27,8 +33,12 @@ export interface ReadyAudit {
 }
 
 /** Names of the models that have ready audits. */
-export const AUDITED_MODELS: readonly string[] = [...Object.keys(CATALOGUE), "jt"];
+export const AUDITED_MODELS: readonly string[] = [...Object.keys(CATALOGUE), "jt", "anomaly4d"];
+/** Those with an action in two dimensions. */
+export const TWO: readonly string[] = [...Object.keys(CATALOGUE), "jt"];
 
+/** The conformal anomaly in four dimensions. */
+const FOUR = "anomaly4d";
 const FAMILY = ["rst", "bpp", "solvable"]; // members of the exactly solvable family
 
 function ofModel(name: string): ReadyAudit[] {
@@ -52,12 +62,14 @@ export function readyAudits(model?: string): ReadyAudit[] {
   const all: ReadyAudit[] = [
     ...about([], () => staticAudit(GENERIC), () => lightConeAudit(GENERIC)),
     ...about([], anomalyAudit, staticTensorAudit, horizonAudit, boulwareAudit, killingAudit),
-    ...AUDITED_MODELS.flatMap(ofModel),
+    ...TWO.flatMap(ofModel),
     ...about(FAMILY, liouvilleAudit, closedFormAudit),
     ...about(["swave"], reductionAudit, schwarzschildAudit),
     ...about(["jt"], jtBathAudit),
+    ...about([FOUR], anomalyActionAudit, anomalySchwarzschildAudit, anomalyDeSitterAudit),
+    ...about([FOUR], contentAudit),
   ];
   return model === undefined
     ? all
-    : all.filter(({ models }) => models.length === 0 || models.includes(model));
+    : all.filter(({ models }) => models.includes(model) || (models.length === 0 && model !== FOUR));
 }
