@@ -57,11 +57,19 @@ function leaves(item: string, a: unknown, b: unknown): Origin[] {
  *
  * @param a Identity of the first run.
  * @param b Identity of the second.
- * @returns Every value that differs but for the digest of the parameter table, which says nothing by itself.
+ * @returns Every value that differs, of the expressions those of models in both. The digest of the parameter
+ * table is left out: it says nothing by itself.
  */
 export function origins(a: RunIdentity, b: RunIdentity): readonly Origin[] {
-  const { table: _a, ...first } = a, { table: _b, ...second } = b;
-  return leaves("", first, second);
+  const models = Object.keys(a.expressions).filter((model) => model in b.expressions);
+  const told = ({ core, settings, pins, runtime, expressions }: RunIdentity) => ({
+    core,
+    settings,
+    pins,
+    runtime,
+    expressions: Object.fromEntries(models.map((model) => [model, expressions[model]])),
+  });
+  return leaves("", told(a), told(b));
 }
 
 /**

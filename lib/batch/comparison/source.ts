@@ -64,7 +64,11 @@ export interface Source {
 
 /** Tables that cannot be compared. */
 export class ComparisonError extends Error {
-  /** @param faults What must hold, one line each. */
+  /**
+   * Makes the error.
+   *
+   * @param faults What must hold, one line each.
+   */
   constructor(faults: readonly string[]) {
     super(faults.join("\n"));
     this.name = "ComparisonError";
