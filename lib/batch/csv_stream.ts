@@ -41,7 +41,8 @@ async function* wholeLines(bytes: AsyncIterable<Uint8Array>): AsyncGenerator<Uin
  * Reads records as they come.
  *
  * @param bytes Pieces of the file.
- * @param faults Where faults of encoding, line ends and quotes go; nothing is read after the first.
+ * @param faults Where faults of encoding, line ends and quotes go; the file is not read on after the first
+ * piece that has one.
  * @returns Records in order, the header first, with their lines in the file.
  */
 export async function* csvRecords(

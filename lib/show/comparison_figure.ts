@@ -19,7 +19,11 @@ const EXCESS: Axis = {
   symbol: "|a \u2212 b|/(\u03b4a + \u03b4b)",
   unit: "dimensionless",
 };
-const ROWS: Axis = { quantity: "number of rows in the lane of a column,", symbol: "n", unit: "1" };
+const ROWS: Axis = {
+  quantity: "rows in the lane of each quantity,",
+  symbol: "n",
+  unit: "dimensionless",
+};
 /** Axes of the figure. */
 export const COMPARISON_AXES: readonly Axis[] = [EXCESS, ROWS];
 
@@ -30,6 +34,9 @@ const BEYOND = "#b4531f";
 const STEP = 1 / BINS_PER_DECADE;
 /** Room between the decades and the bars of equal and of infinitely distant numbers, in decades. */
 const GAP = 0.75;
+
+/** What became of rows that were compared number by number. */
+const COMPARED = ["identical", "stamp", "within", "beyond", "kind"] as const;
 
 type Bin = number | "0" | "INF";
 
@@ -121,7 +128,7 @@ export function comparisonFigure(
     xLabel: axisLabel(EXCESS),
     marks: [...laneMarks(columns, ends), verticalRule(0, INK)],
   });
-  const compared = ROW_WORDS.reduce((sum, change) => sum + comparison.rows[change], 0);
+  const compared = COMPARED.reduce((sum, change) => sum + comparison.rows[change], 0);
   return figureSvg({
     title: COMPARISON_TITLE,
     widthMm,
@@ -135,6 +142,3 @@ export function comparisonFigure(
     stampName: "SHA-256 of results.csv",
   });
 }
-
-/** Rows that were compared number by number. */
-const ROW_WORDS = ["identical", "stamp", "within", "beyond", "kind"] as const;

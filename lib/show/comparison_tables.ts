@@ -59,7 +59,8 @@ function cell(text: string, error: string): string {
 }
 
 function excessText(excess: number): string {
-  return excess === Infinity ? "\u221e" : String(Number(excess.toPrecision(3)));
+  if (excess === Infinity) return "\u221e";
+  return excess < 1e4 ? String(Number(excess.toPrecision(3))) : excess.toExponential(2);
 }
 
 function worstTable({ columns }: Comparison, lines: number): ShownTable {
