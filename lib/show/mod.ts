@@ -45,6 +45,7 @@ export { type Difference, ROW_CHANGES, type RowChange } from "../batch/compariso
 export {
   type ComparedSource,
   ComparisonError,
+  type Inputs,
   type RowsInMemory,
 } from "../batch/comparison/source.ts";
 export type { OnDifference } from "../batch/comparison/tally.ts";

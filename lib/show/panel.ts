@@ -227,6 +227,6 @@ export function bar(
     y1: (d: number[]) => d[2],
     y2: (d: number[]) => d[3],
     fill: options.colour,
-    ariaLabel: options.name,
+    ariaLabel: [options.name],
   });
 }

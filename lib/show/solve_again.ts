@@ -4,12 +4,13 @@
  * @module
  */
 import { PARAMETER_COLUMNS } from "../batch/columns.ts";
-import type { RowsInMemory } from "../batch/comparison/source.ts";
+import type { Inputs, RowsInMemory } from "../batch/comparison/source.ts";
 import { readCsv } from "../batch/csv.ts";
 import { FILES, readIfPresent } from "../batch/folder.ts";
 import { nearest } from "../batch/nearest.ts";
 import type { RunIdentity } from "../batch/record.ts";
 import type { ResultCells } from "../batch/result_row.ts";
+import { stampInputs } from "../batch/stamp.ts";
 import type { Run } from "./run_reader.ts";
 import { solveRow } from "./solve.ts";
 import { camel, rowOf, type SolveOptions } from "./solve_options.ts";
@@ -69,14 +70,14 @@ function parameters({ folder }: Run): ReadonlyMap<string, Options> {
 export async function solveAgain(
   run: Run,
   changes: Readonly<Record<string, ChangedParameters>>,
-): Promise<RowsInMemory & { readonly identity: RunIdentity }> {
+): Promise<RowsInMemory> {
   const known = parameters(run), names = Object.keys(changes);
   const unknown = names.filter((name) => !known.has(name))
     .map((name) => `${name} (nearest: ${nearest(name, [...known.keys()])})`);
   if (unknown.length > 0) {
     throw new Error(`Cannot solve again as ${run.name} must have the case: ${unknown.join(", ")}`);
   }
-  const rows: ResultCells[] = [];
+  const rows: ResultCells[] = [], inputs = new Map<string, Inputs>();
   const expressions: Record<string, RunIdentity["expressions"][string]> = {};
   let shared: Pick<RunIdentity, "settings" | "core" | "pins" | "runtime"> | undefined;
   for (const [name, changed] of Object.entries(changes)) {
@@ -84,13 +85,11 @@ export async function solveAgain(
     const { cells, context } = await solveRow({ ...row, case: name });
     const { expressions: own, ...rest } = context;
     rows.push(cells);
+    inputs.set(name, stampInputs(row.input));
     expressions[row.input.model] = own;
     shared = rest;
   }
   if (shared === undefined) throw new Error("Cannot solve again as a case must be named: got none");
-  return {
-    name: `${run.name}, solved again`,
-    rows,
-    identity: { table: "", expressions, ...shared },
-  };
+  const identity = { table: "", expressions, ...shared };
+  return { name: `${run.name}, solved again`, rows, identity, inputs };
 }

@@ -14,6 +14,9 @@ import type { RunIdentity, RunRecord } from "../record.ts";
 import type { ResultCells } from "../result_row.ts";
 import { rowChecker } from "./row_check.ts";
 
+/** Inputs of a row: columns of the parameter table, defaults filled in. */
+export type Inputs = Readonly<Record<string, string | number>>;
+
 /** Rows in memory, such as those of a run that was read, or of rows that were solved again. */
 export interface RowsInMemory {
   /** What they are called. */
@@ -24,6 +27,8 @@ export interface RowsInMemory {
   readonly folder?: string;
   /** What entered their stamps, where no folder tells. */
   readonly identity?: RunIdentity;
+  /** Inputs by case as they enter stamps, where no folder tells. */
+  readonly inputs?: ReadonlyMap<string, Inputs>;
 }
 
 /** What is compared: the output folder of a run, a results table, or rows in memory. */
@@ -48,8 +53,10 @@ export interface Source {
   readonly name: string;
   /** Where it is, for errors. */
   readonly place: string;
-  /** Folder of the run, if the whole of it is compared. */
+  /** Folder of the run. */
   readonly folder?: string;
+  /** Inputs by case, where they are known without a folder. */
+  readonly inputs?: ReadonlyMap<string, Inputs>;
   /** The run, where its record can be read. */
   readonly run?: KnownRun;
   /** Header. */
@@ -108,6 +115,7 @@ interface Opened {
   readonly digest: () => string;
   readonly faults: Fault[];
   readonly run?: KnownRun;
+  readonly inputs?: ReadonlyMap<string, Inputs>;
 }
 
 async function* checkedRows(columns: readonly string[], { records, faults }: Opened) {
@@ -180,7 +188,7 @@ async function openFile(path: string): Promise<Opened> {
   };
 }
 
-function openRows({ name, rows, folder, identity }: RowsInMemory): Opened {
+function openRows({ rows, name, identity, folder, inputs }: RowsInMemory): Opened {
   const hash = createHash("sha256"), columns = Object.keys(rows[0] ?? {});
   async function* records() {
     const lines = rows.map((row) => columns.map((column) => row[column] ?? ""));
@@ -190,9 +198,10 @@ function openRows({ name, rows, folder, identity }: RowsInMemory): Opened {
     }
   }
   const digest = () => hash.copy().digest("hex");
-  const known = identity ?? (folder === undefined ? undefined : readRecord(folder)?.identity);
-  const run = known === undefined ? {} : { run: { identity: known } };
-  return { name, place: name, records: records(), faults: [], digest, ...run };
+  const told = identity ?? (folder === undefined ? undefined : readRecord(folder)?.identity);
+  const run = told === undefined ? {} : { run: { identity: told } };
+  const given = inputs ? { inputs } : folder === undefined ? {} : { folder };
+  return { name, place: name, records: records(), faults: [], digest, ...run, ...given };
 }
 
 /**
