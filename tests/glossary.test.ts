@@ -1,7 +1,11 @@
 import { parse } from "csv-parse/sync";
 import { expect, it } from "vitest";
 import { PARAMETER_COLUMNS } from "../lib/batch/columns.ts";
+import { COMPARISON_COLUMNS } from "../lib/batch/comparison/comparison_file.ts";
+import { STAMP_PARTS } from "../lib/batch/comparison/origin.ts";
+import { ROW_CHANGES } from "../lib/batch/comparison/row_change.ts";
 import { RESULT_COLUMNS } from "../lib/batch/result_columns.ts";
+import { COMPARE_OPTIONS } from "../lib/cli/compare_options.ts";
 import { EXECUTE_OPTIONS } from "../lib/cli/execute_options.ts";
 import { GRID_OPTIONS } from "../lib/cli/grid_options.ts";
 import { KERNELSPEC_OPTIONS } from "../lib/cli/kernelspec.ts";
@@ -36,10 +40,14 @@ function reasonCodes(): string[] {
 
 const words: Record<string, readonly string[]> = {
   task: Object.keys(JSON.parse(Deno.readTextFileSync("deno.json")).tasks),
-  option: [HELP, ...RUN_OPTIONS, ...GRID_OPTIONS, ...EXECUTE_OPTIONS, ...KERNELSPEC_OPTIONS].map((
-    { name },
-  ) => name)
-    .filter((name) => name !== ""),
+  option: [
+    HELP,
+    ...RUN_OPTIONS,
+    ...GRID_OPTIONS,
+    ...COMPARE_OPTIONS,
+    ...EXECUTE_OPTIONS,
+    ...KERNELSPEC_OPTIONS,
+  ].map(({ name }) => name).filter((name) => name !== ""),
   model: MODEL_NAMES,
   state: STATE_NAMES,
   "parameter column": ["case", "model", "state", ...PARAMETER_COLUMNS.map(({ name }) => name)],
@@ -49,6 +57,9 @@ const words: Record<string, readonly string[]> = {
   "inner end": INNER_ENDS,
   "validity code": ["inside", ...VALIDITY_CODES],
   "reason code": reasonCodes(),
+  "comparison column": COMPARISON_COLUMNS,
+  "row change": ROW_CHANGES,
+  "stamp part": STAMP_PARTS,
   "figure title": FIGURE_TITLES,
 };
 

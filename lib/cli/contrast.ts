@@ -15,16 +15,18 @@ import { closing, STATUS } from "./status.ts";
 const NAMES = { table: "comparison.csv", figure: "comparison.svg" } as const;
 
 function openOut(out: string, replace: boolean): ComparisonFile {
-  const there = Object.values(NAMES).find((name) => readIfPresent(`${out}/${name}`) !== undefined);
-  if (there !== undefined && !replace) {
-    throw new UsageError([`Cannot write ${out}/${there} as it is there already; give --replace`]);
-  }
+  let there: string | undefined;
   try {
-    Deno.mkdirSync(out, { recursive: true });
-    return new ComparisonFile(`${out}/${NAMES.table}`);
+    there = Object.values(NAMES).find((name) => readIfPresent(`${out}/${name}`) !== undefined);
+    if (there === undefined || replace) {
+      Deno.mkdirSync(out, { recursive: true });
+      return new ComparisonFile(`${out}/${NAMES.table}`);
+    }
   } catch (error) {
-    throw new UsageError([`Cannot write to ${out}: ${(error as Error).message}`]);
+    const must = "it must be a folder that can be written";
+    throw new UsageError([`Cannot write to ${out} as ${must}: ${(error as Error).message}`]);
   }
+  throw new UsageError([`Cannot write ${out}/${there} as it is there already; give --replace`]);
 }
 
 async function compareInto(request: CompareRequest): Promise<RunComparison> {
