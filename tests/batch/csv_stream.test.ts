@@ -7,7 +7,6 @@ import type { Fault } from "../../lib/batch/fault.ts";
 /** Reads a text in pieces of the given sizes, over and over. */
 async function inPieces(text: string, sizes: readonly number[]) {
   const bytes = new TextEncoder().encode(text), faults: Fault[] = [];
-  // deno-lint-ignore require-await -- stands for a file
   async function* pieces() {
     for (let at = 0, i = 0; at < bytes.length; i++) {
       const size = sizes[i % sizes.length];

@@ -2,7 +2,6 @@ import fc from "fast-check";
 import { describe, expect, it } from "vitest";
 import { meet } from "../../../lib/batch/comparison/meet.ts";
 
-// deno-lint-ignore require-await -- stands for a file
 async function* rows(cases: readonly string[]) {
   for (const name of cases) yield { case: name };
 }
@@ -27,7 +26,6 @@ describe("Rows of two tables", () => {
 
   it("are read in step, so that tables in the same order are never held", async () => {
     let read = 0;
-    // deno-lint-ignore require-await -- stands for a file
     async function* counted() {
       for (let i = 0; i < 100; i++) {
         read++;
@@ -43,7 +41,6 @@ describe("Rows of two tables", () => {
 
   it("are let go on the way if nobody wants more", async () => {
     const ended: string[] = [];
-    // deno-lint-ignore require-await -- stands for a file
     async function* open(name: string) {
       try {
         for (let i = 0; i < 9; i++) yield { case: String(i) };
