@@ -106,13 +106,10 @@ function nothing(width: number): string {
  * Draws how far the numbers of two tables lie apart.
  *
  * @param comparison What changed.
- * @param widthMm Width in millimetres.
  * @returns SVG text.
  */
-export function comparisonFigure(
-  comparison: Comparison,
-  widthMm: number = COLUMN_WIDTHS.double,
-): string {
+export function comparisonFigure(comparison: Comparison): string {
+  const widthMm = COLUMN_WIDTHS.double;
   const { a, b, columns } = comparison, width = points(widthMm), ends = decades(columns);
   const height = columns.length === 0
     ? LANE_HEIGHT

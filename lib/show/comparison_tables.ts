@@ -60,6 +60,7 @@ function cell(text: string, error: string): string {
 
 function excessText(excess: number): string {
   if (excess === Infinity) return "\u221e";
+  if (excess === 0) return "0 (only bounds)";
   return excess < 1e4 ? String(Number(excess.toPrecision(3))) : excess.toExponential(2);
 }
 
@@ -67,7 +68,8 @@ function worstTable({ columns }: Comparison, lines: number): ShownTable {
   const each = Math.max(1, Math.floor(lines / Math.max(1, columns.length)));
   const rows = columns.slice(0, lines).flatMap(({ column, within, beyond, worst }) => {
     const title = RESULT_COLUMNS.find(({ name }) => name === column)?.title ?? column;
-    return worst.slice(0, each).map((d, i) => [
+    const shown = worst.slice(0, each).filter((d, i) => i === 0 || d.excess! > 0);
+    return shown.map((d, i) => [
       ...(i === 0 ? [title, String(within), String(beyond)] : ["", "", ""]),
       excessText(d.excess!),
       d.case,

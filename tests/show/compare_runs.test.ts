@@ -54,6 +54,10 @@ describe("compareRuns", () => {
     const result = await compareRuns({ name: "a", rows }, { name: "b", rows: shifted });
     expect(result.text(2).match(/ x\d /g)).toEqual([" x8 ", " x7 "]);
     expect(result.columns[0].worst[0].excess).toBe(36); // 10 - 1 over 0.25
+    const bounds = rows.map((row) => ({ ...row, dilaton_locus_err: "1" }));
+    const same = await compareRuns({ name: "a", rows }, { name: "b", rows: bounds });
+    expect(same.text().match(/ x\d /g)).toEqual([" x0 "]); // all alike: one of them will do
+    expect(same.text()).toContain("0 (only bounds)");
   });
 
   it("shows itself as tables without markup from the cells", async () => {
