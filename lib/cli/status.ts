@@ -4,7 +4,7 @@
  *
  * @module
  */
-import { ComparisonError } from "../batch/comparison/source.ts";
+import { ComparisonError } from "../batch/comparison/comparison_error.ts";
 import { TableError } from "../batch/fault.ts";
 import { FolderError } from "../batch/folder.ts";
 import { UsageError } from "./options.ts";

@@ -42,12 +42,8 @@ export type {
 } from "../batch/comparison/comparison.ts";
 export { type Origin, STAMP_PARTS, type StampPart } from "../batch/comparison/origin.ts";
 export { type Difference, ROW_CHANGES, type RowChange } from "../batch/comparison/row_change.ts";
-export {
-  type ComparedSource,
-  ComparisonError,
-  type Inputs,
-  type RowsInMemory,
-} from "../batch/comparison/source.ts";
+export { ComparisonError } from "../batch/comparison/comparison_error.ts";
+export type { ComparedSource, Inputs, RowsInMemory } from "../batch/comparison/source.ts";
 export type { OnDifference } from "../batch/comparison/tally.ts";
 export type { CoreIdentity } from "../batch/core.ts";
 export type { RunIdentity } from "../batch/record.ts";

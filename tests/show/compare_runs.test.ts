@@ -87,6 +87,8 @@ describe("The figure of a comparison", () => {
     for (const axis of COMPARISON_AXES) expect(svg).toContain(axisLabel(axis));
     expect(svg.match(/aria-label="dilaton_locus: 1"/g)).toHaveLength(5);
     expect(svg).toContain("2 beyond");
+    expect(svg.match(/fill="#b4531f"/g)).toHaveLength(2); // beyond, divergence among them
+    expect(svg.match(/fill="#14324f"/g)).toHaveLength(3);
     const { a, b } = await compareRuns({ name: "a", rows }, { name: "b", rows: wild });
     for (const { digest } of [a, b]) expect(svg).toContain(digest.slice(0, 12));
   });

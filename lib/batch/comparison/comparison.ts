@@ -5,16 +5,11 @@
  */
 import { FILES } from "../folder.ts";
 import type { ColumnChange } from "./column_change.ts";
+import { ComparisonError, faultText } from "./comparison_error.ts";
 import { meet } from "./meet.ts";
 import { type Origin, origins, type StampPart } from "./origin.ts";
 import type { Difference, RowChange } from "./row_change.ts";
-import {
-  type ComparedSource,
-  ComparisonError,
-  faultText,
-  openSource,
-  type Source,
-} from "./source.ts";
+import { type ComparedSource, openSource, type Source } from "./source.ts";
 import { type OnDifference, Tally } from "./tally.ts";
 
 /** One of two compared tables. */

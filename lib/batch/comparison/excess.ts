@@ -36,5 +36,5 @@ function ratio(distance: Pair, bounds: Pair): number {
     return ratio(half(distance), half(bounds));
   }
   const beyond = d > s || (d === s && dRest > sRest);
-  return beyond ? Math.max(d / s, 1 + Number.EPSILON) : Math.min(d / s, 1);
+  return beyond ? Math.max(d / s, 1 + Number.EPSILON) : d / s;
 }

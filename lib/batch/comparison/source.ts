@@ -8,10 +8,11 @@ import { basename, dirname, resolve } from "node:path";
 import { type CsvRecord, lengthFault } from "../csv.ts";
 import { csvRecords } from "../csv_stream.ts";
 import { csvLines } from "../csv_writer.ts";
-import { describeFault, type Fault } from "../fault.ts";
+import type { Fault } from "../fault.ts";
 import { FILES, readRecord } from "../folder.ts";
 import type { RunIdentity, RunRecord } from "../record.ts";
 import type { ResultCells } from "../result_row.ts";
+import { ComparisonError, faultText, MOST_FAULTS } from "./comparison_error.ts";
 import { rowChecker } from "./row_check.ts";
 
 /** Inputs of a row: columns of the parameter table, defaults filled in. */
@@ -69,32 +70,8 @@ export interface Source {
   readonly faults: readonly Fault[];
 }
 
-/** Tables that cannot be compared. */
-export class ComparisonError extends Error {
-  /**
-   * Makes the error.
-   *
-   * @param faults What must hold, one line each.
-   */
-  constructor(faults: readonly string[]) {
-    super(faults.join("\n"));
-    this.name = "ComparisonError";
-  }
-}
-
 /** Columns without which a table is no results table. */
 const REQUIRED = ["case", "model", "state", "outcome", "kind", "stamp"];
-/** Faults that are kept of one table: more would not help. */
-const MOST_FAULTS = 100;
-
-/** The faults of a table as one text, undefined if it has none. */
-export function faultText({ place, faults }: Pick<Source, "place" | "faults">): string | undefined {
-  if (faults.length === 0) return undefined;
-  const lines = faults.slice(0, MOST_FAULTS).map(describeFault);
-  if (faults.length > MOST_FAULTS) lines.push("and more");
-  return `Cannot compare ${place} as it must be a results table:\n${lines.join("\n")}`;
-}
-
 function headerFaults({ fields, line }: CsvRecord): Fault[] {
   const twice = fields.filter((name, i) => fields.indexOf(name) !== i);
   return [

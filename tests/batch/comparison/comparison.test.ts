@@ -1,7 +1,7 @@
 import { afterAll, describe, expect, it } from "vitest";
 import { compareResults } from "../../../lib/batch/comparison/comparison.ts";
 import type { Difference, RowChange } from "../../../lib/batch/comparison/row_change.ts";
-import { ComparisonError } from "../../../lib/batch/comparison/source.ts";
+import { ComparisonError } from "../../../lib/batch/comparison/comparison_error.ts";
 import { RESULT_COLUMNS } from "../../../lib/batch/result_columns.ts";
 import { sha256 } from "../../../lib/batch/stamp.ts";
 
@@ -217,6 +217,22 @@ describe("What the records of two runs tell", () => {
     // by the results alone the mass was found, not given
     const blind = await compareResults(`${a}/results.csv`, `${b}/results.csv`);
     expect([blind.rows.beyond, blind.tablesKnown]).toEqual([1, false]);
+  });
+
+  it("is that a tolerance in the parameter tables asks for no other numbers", async () => {
+    const table = (tolerance: string) =>
+      `case,model,state,kappa,mass,tolerance\nx,rst,boulware,1,3,${tolerance}\n`;
+    const a = folder("demand-a", [row("x")], { table: table("1e-10") });
+    const changed = row("x", { tolerance: "1e-6", stamp: "bb" });
+    const b = folder("demand-b", [changed], { table: table("1e-6") });
+    const { rows: counts, tablesKnown } = await compareResults(a, b);
+    expect([counts.stamp, tablesKnown]).toEqual([1, true]);
+    const { tolerance: _, ...bare } = row("x"); // a version whose results do not repeat it
+    const given = (tolerance: number) => ({
+      ...rows("bare", bare),
+      inputs: new Map([["x", { kappa: 1, tolerance }]]),
+    });
+    expect((await compareResults(given(1e-10), given(1e-6))).rows.identical).toBe(1);
   });
 
   it("is that the same parameters were given in other words", async () => {
