@@ -32,37 +32,49 @@ const LANE_HEIGHT = 19;
 const WITHIN = "#14324f";
 const BEYOND = "#b4531f";
 const STEP = 1 / BINS_PER_DECADE;
-/** Room between the decades and the bars of equal and of infinitely distant numbers, in decades. */
-const GAP = 0.75;
+/** Room between the decades and the bars of equal and of infinitely distant numbers, in bars. */
+const GAP = 2.5;
+/** Decades from which on bars are wider. */
+const MOST_DECADES = 16;
 
 /** What became of rows that were compared number by number. */
 const COMPARED = ["identical", "stamp", "within", "beyond", "kind"] as const;
 
 type Bin = number | "0" | "INF";
 
+/** The horizontal axis, in decades. */
+interface Decades {
+  readonly low: number;
+  readonly high: number;
+  /** Width of a bar: a quarter of a decade, or a whole multiple of it where the axis is long. */
+  readonly step: number;
+  /** Left edge of a bin. */
+  readonly edge: (bin: Bin) => number;
+}
+
 /** Decades that hold all bins, the bound itself among them. */
-function decades(columns: readonly ColumnChange[]): readonly [number, number] {
+function decadesOf(columns: readonly ColumnChange[]): Decades {
   const bins = columns.flatMap(({ sizes }) =>
     [...sizes.keys()].filter((b) => typeof b === "number")
   );
-  const low = bins.reduce((least, bin) => Math.min(least, bin), -BINS_PER_DECADE);
-  const high = bins.reduce((most, bin) => Math.max(most, bin + 1), BINS_PER_DECADE);
-  return [Math.floor(low * STEP), Math.ceil(high * STEP)];
+  const least = bins.reduce((least, bin) => Math.min(least, bin), -BINS_PER_DECADE);
+  const most = bins.reduce((most, bin) => Math.max(most, bin + 1), BINS_PER_DECADE);
+  const low = Math.floor(least * STEP), high = Math.ceil(most * STEP);
+  const joined = Math.max(1, Math.ceil((high - low) / MOST_DECADES)), step = joined * STEP;
+  const edge = (bin: Bin): number => {
+    if (bin === "0") return low - (GAP + 1) * step;
+    return bin === "INF" ? high + GAP * step : Math.floor(bin / joined) * step;
+  };
+  return { low, high, step, edge };
 }
 
-/** Left edge of a bin, in decades. */
-function edge(bin: Bin, [low, high]: readonly [number, number]): number {
-  if (bin === "0") return low - GAP - STEP / 2;
-  return bin === "INF" ? high + GAP - STEP / 2 : bin * STEP;
-}
-
-function excessScale(ends: readonly [number, number]): Scale {
-  const [low, high] = ends, every = Math.ceil((high - low) / 10);
+function excessScale({ low, high, step, edge }: Decades): Scale {
+  const every = Math.ceil((high - low) / 10);
   const powers = Array.from({ length: high - low + 1 }, (_, i) => low + i)
     .filter((power) => power % every === 0);
-  const zero = edge("0", ends) + STEP / 2, infinite = edge("INF", ends) + STEP / 2;
+  const zero = edge("0") + step / 2, infinite = edge("INF") + step / 2;
   return {
-    domain: [zero - 0.5, infinite + 0.5],
+    domain: [zero - 2 * step, infinite + 2 * step],
     place: (excess) => Math.log10(excess),
     ticks: [zero, ...powers, infinite],
     text: (t) => t === zero ? "0" : t === infinite ? "\u221e" : powerText(Math.round(t)),
@@ -82,18 +94,26 @@ function laneScale(columns: readonly ColumnChange[]): Scale {
   };
 }
 
-function laneMarks(columns: readonly ColumnChange[], ends: readonly [number, number]): Mark[] {
-  const counts = columns.flatMap(({ sizes }) => [...sizes.values()]);
-  const full = Math.log10(1 + counts.reduce((most, n) => Math.max(most, n), 1));
-  return columns.flatMap(({ column, sizes, beyond }, i) => {
-    const bars = [...sizes].map(([bin, n]) => {
-      const x = edge(bin, ends), height = 0.85 * Math.log10(1 + n) / full;
-      const colour = bin === "INF" || (typeof bin === "number" && bin >= 0) ? BEYOND : WITHIN;
-      return bar([x, x + STEP], [-i - 1, -i - 1 + height], { colour, name: `${column}: ${n}` });
+/** Rows by bar: bins that share one are added up. */
+function barsOf({ sizes }: ColumnChange, { edge }: Decades): ReadonlyMap<number, number> {
+  const bars = new Map<number, number>();
+  for (const [bin, n] of sizes) bars.set(edge(bin), (bars.get(edge(bin)) ?? 0) + n);
+  return bars;
+}
+
+function laneMarks(columns: readonly ColumnChange[], decades: Decades): Mark[] {
+  const lanes = columns.map((column) => barsOf(column, decades));
+  const most = lanes.flatMap((bars) => [...bars.values()]).reduce((m, n) => Math.max(m, n), 1);
+  const right = excessScale(decades).domain[1];
+  return columns.flatMap(({ column, beyond }, i) => {
+    const bars = [...lanes[i]].map(([x, n]) => {
+      const height = 0.85 * Math.log10(1 + n) / Math.log10(1 + most);
+      const style = { colour: x >= 0 ? BEYOND : WITHIN, name: `${column}: ${n}` };
+      return bar([x, x + decades.step], [-i - 1, -i - 1 + height], style);
     });
-    const right = excessScale(ends).domain[1], style = { colour: INK, dx: 4, dy: 0 } as const;
+    const style = { colour: INK, dx: 4, dy: 0, anchor: "start" } as const;
     const text = beyond === 0 ? "none beyond" : `${beyond} beyond`;
-    return [...bars, words([right, -i - 0.5], { ...style, text, anchor: "start" })];
+    return [...bars, words([right, -i - 0.5], { ...style, text })];
   });
 }
 
@@ -110,7 +130,7 @@ function nothing(width: number): string {
  */
 export function comparisonFigure(comparison: Comparison): string {
   const widthMm = COLUMN_WIDTHS.double;
-  const { a, b, columns } = comparison, width = points(widthMm), ends = decades(columns);
+  const { a, b, columns } = comparison, width = points(widthMm), decades = decadesOf(columns);
   const height = columns.length === 0
     ? LANE_HEIGHT
     : MARGINS.top + LANE_HEIGHT * columns.length + MARGINS.bottom;
@@ -120,10 +140,10 @@ export function comparisonFigure(comparison: Comparison): string {
     margins: MARGINS,
     letter: "",
     heading: [{ text: axisLabel(ROWS) }],
-    x: excessScale(ends),
+    x: excessScale(decades),
     y: laneScale(columns),
     xLabel: axisLabel(EXCESS),
-    marks: [...laneMarks(columns, ends), verticalRule(0, INK)],
+    marks: [...laneMarks(columns, decades), verticalRule(0, INK)],
   });
   const compared = COMPARED.reduce((sum, change) => sum + comparison.rows[change], 0);
   return figureSvg({
@@ -132,7 +152,7 @@ export function comparisonFigure(comparison: Comparison): string {
     height,
     parts: [{ x: 0, y: 0, svg }],
     caption: `${COMPARISON_TITLE}, ${compared} rows with equal inputs; equal numbers with equal ` +
-      "bounds are not drawn. A bar holds the rows of a quarter decade, its height grows as " +
+      `bounds are not drawn. A bar holds the rows of ${decades.step} decades, its height grows as ` +
       "log(1 + n). Right of the dashed rule two numbers with their bounds have no value in common. " +
       `A: ${a.name}, SHA-256 of results.csv ${a.digest.slice(0, SHORT_STAMP)}; B: ${b.name},`,
     stamp: b.digest,
