@@ -4,8 +4,12 @@ import CLAIMS from "../data/schema/claims.schema.json" with { type: "json" };
 import { CONVENTIONS } from "../lib/audit/conventions.ts";
 import { VERDICTS } from "../lib/audit/judge.ts";
 import { PARAMETER_COLUMNS } from "../lib/batch/columns.ts";
+import { COMPARISON_COLUMNS } from "../lib/batch/comparison/comparison_file.ts";
+import { STAMP_PARTS } from "../lib/batch/comparison/origin.ts";
+import { ROW_CHANGES } from "../lib/batch/comparison/row_change.ts";
 import { RESULT_COLUMNS } from "../lib/batch/result_columns.ts";
 import { AUDIT_OPTIONS } from "../lib/cli/audit_options.ts";
+import { COMPARE_OPTIONS } from "../lib/cli/compare_options.ts";
 import { EXECUTE_OPTIONS } from "../lib/cli/execute_options.ts";
 import { GRID_OPTIONS } from "../lib/cli/grid_options.ts";
 import { KERNELSPEC_OPTIONS } from "../lib/cli/kernelspec.ts";
@@ -44,13 +48,11 @@ const words: Record<string, readonly string[]> = {
     HELP,
     ...RUN_OPTIONS,
     ...GRID_OPTIONS,
-    ...EXECUTE_OPTIONS,
     ...AUDIT_OPTIONS,
+    ...COMPARE_OPTIONS,
+    ...EXECUTE_OPTIONS,
     ...KERNELSPEC_OPTIONS,
-  ].map((
-    { name },
-  ) => name)
-    .filter((name) => name !== ""),
+  ].map(({ name }) => name).filter((name) => name !== ""),
   model: MODEL_NAMES,
   state: STATE_NAMES,
   "parameter column": ["case", "model", "state", ...PARAMETER_COLUMNS.map(({ name }) => name)],
@@ -60,6 +62,9 @@ const words: Record<string, readonly string[]> = {
   "inner end": INNER_ENDS,
   "validity code": ["inside", ...VALIDITY_CODES],
   "reason code": reasonCodes(),
+  "comparison column": COMPARISON_COLUMNS,
+  "row change": ROW_CHANGES,
+  "stamp part": STAMP_PARTS,
   "figure title": FIGURE_TITLES,
   verdict: VERDICTS,
   setting: CLAIMS.properties.setting.enum,

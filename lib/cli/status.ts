@@ -1,8 +1,10 @@
 /**
- * Exit status of the commands: 0 done, 1 a row failed, 2 bad input or usage, 3 interrupted.
+ * Exit status of the commands: 0 done, 1 a row failed or two runs differ, 2 bad input or usage,
+ * 3 interrupted.
  *
  * @module
  */
+import { ComparisonError } from "../batch/comparison/comparison_error.ts";
 import { TableError } from "../batch/fault.ts";
 import { FolderError } from "../batch/folder.ts";
 import { UsageError } from "./options.ts";
@@ -21,7 +23,9 @@ export async function closing(command: () => Promise<number>): Promise<number> {
     return await command();
   } catch (error) {
     console.error(error instanceof Error ? error.message : String(error));
-    const bad = [TableError, FolderError, UsageError].some((kind) => error instanceof kind);
+    const bad = [TableError, FolderError, ComparisonError, UsageError].some((kind) =>
+      error instanceof kind
+    );
     return bad ? STATUS.usage : STATUS.interrupted;
   }
 }

@@ -214,3 +214,19 @@ export function words(
     fontSize: TICK_SIZE,
   });
 }
+
+/** A filled bar between drawn coordinates, optionally named for readers' software. */
+export function bar(
+  [x1, x2]: readonly [number, number],
+  [y1, y2]: readonly [number, number],
+  options: { readonly colour: string; readonly name: string },
+): Mark {
+  return Plot.rect([[x1, x2, y1, y2]], {
+    x1: (d: number[]) => d[0],
+    x2: (d: number[]) => d[1],
+    y1: (d: number[]) => d[2],
+    y2: (d: number[]) => d[3],
+    fill: options.colour,
+    ariaLabel: [options.name],
+  });
+}

@@ -67,7 +67,9 @@ export type SolveOptions =
   & ToleranceOption
   & (LinearDilatonOptions | SWaveOptions);
 
-const camel = (column: string): string => column.replace(/_([a-z])/g, (_, c) => c.toUpperCase());
+/** Name of a column as an option. */
+export const camel = (column: string): string =>
+  column.replace(/_([a-z])/g, (_, c) => c.toUpperCase());
 const COLUMN_OF = new Map(
   ["model", "state", ...PARAMETER_COLUMNS.map((column) => column.name)].map((c) => [camel(c), c]),
 );
