@@ -48,6 +48,27 @@ export {
 export { computeRow, type RowOptions } from "./observe/row.ts";
 export { THRESHOLDS, VALIDITY_CODES } from "./observe/validity.ts";
 export {
+  type AnomalyCoefficients,
+  anomalyOf,
+  BETA_SCHEMES,
+  type BetaScheme,
+  type FieldContent,
+  SUPER_YANG_MILLS,
+} from "./model/content.ts";
+export {
+  type BackReaction,
+  backReaction,
+  type Correction,
+  type RadialSource,
+} from "./stress/back_reaction.ts";
+export {
+  type ConformalFields,
+  type ConformalStress,
+  conformalStress,
+  type StressAt,
+} from "./stress/conformal_stress.ts";
+export type { StaticGeometry } from "./stress/geometry.ts";
+export {
   closedForm,
   type ClosedFormColumn,
   type ClosedFormInput,

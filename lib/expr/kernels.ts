@@ -74,8 +74,8 @@ export class Kernels extends Quotients {
   power(a: Quotient, r: Num): Quotient {
     if (r.q === 1n) return this.integer(a, Number(r.p));
     if (a.n.size === 0) return a;
-    const exponent = Number(r.p) * (UNIT / Number(r.q));
-    if (!Number.isInteger(exponent)) return this.exp(this.product(this.number(r), this.log(a)));
+    const exponent = units(r);
+    if (exponent === undefined) return this.exp(this.product(this.number(r), this.log(a)));
     const { unit, base, d } = this.split(a);
     let out = this.number(num(1));
     const [t] = unit.values();
@@ -138,15 +138,17 @@ export class Kernels extends Quotients {
       const g = m.length === 2 && m[1] === UNIT ? this.generators[m[0]!]! : undefined;
       out = this.product(
         out,
-        g?.kind === "log" ? this.power(g.of, c) : this.kernel({ n: poly.single(m), d: NONE }, c),
+        g?.kind === "log" && units(c) !== undefined
+          ? this.power(g.of, c)
+          : this.kernel({ n: poly.single(m), d: NONE }, c),
       );
     }
     return out;
   }
 
   kernel(of: Quotient, c: Num): Quotient {
-    const e = Number(c.p) * (UNIT / Number(c.q));
-    if (Number.isSafeInteger(e)) {
+    const e = units(c);
+    if (e !== undefined) {
       return this.generator(`e ${this.key(of)}`, { kind: "exp", of }, e);
     }
     const all = this.product(of, this.number(c));
@@ -181,6 +183,14 @@ export class Kernels extends Quotients {
     if (!(one && one.m.length === 0 && one.c.p === 1n)) term(opaque(rest), num(1));
     return out;
   }
+}
+
+/** A rational in units of exponents; undefined if it is no whole number of them or not exact as a double. */
+function units(r: Num): number | undefined {
+  const whole = r.p * BigInt(UNIT);
+  if (whole % r.q !== 0n) return undefined;
+  const out = Number(whole / r.q);
+  return Number.isSafeInteger(out) ? out : undefined;
 }
 
 /** Prime factors up to 1000; what is left stands as one factor. */

@@ -23,8 +23,11 @@ export type BetaScheme = (typeof BETA_SCHEMES)[number];
 
 /** Coefficients of the anomaly, exact. */
 export interface AnomalyCoefficients {
+  /** Of the Weyl tensor squared. */
   readonly c: Num;
+  /** Of minus the Euler density. */
   readonly a: Num;
+  /** Of box R. */
   readonly beta: Num;
 }
 

@@ -152,6 +152,13 @@ export class DoubleDoubleWalker implements Walker<DoubleDouble> {
     return y;
   }
 
+  coefficient(name: string, k: number): DoubleDouble {
+    const at = this.code.row[name]! * (this.code.accuracy.order + 1) + k;
+    let hi = this.#C[at]!, lo = this.#L[at]!;
+    for (let i = 0; i < k; i++) [hi, lo] = [hi / this.unit, lo / this.unit]; // a power of two: exact
+    return { hi, lo };
+  }
+
   slope(name: string): number {
     return this.#C[this.code.row[name]! * (this.code.accuracy.order + 1) + 1]! / this.unit;
   }

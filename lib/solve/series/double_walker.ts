@@ -116,6 +116,12 @@ export class DoubleWalker implements Walker<number> {
     return y;
   }
 
+  coefficient(name: string, k: number): number {
+    let c = this.table[this.code.row[name]! * (this.code.accuracy.order + 1) + k]!;
+    for (let i = 0; i < k; i++) c /= this.unit; // a power of two: exact
+    return c;
+  }
+
   slope(name: string): number {
     return this.table[this.code.row[name]! * (this.code.accuracy.order + 1) + 1]! / this.unit;
   }

@@ -27,6 +27,8 @@ export interface Walker<T> {
   expand(followed: readonly string[]): number;
   /** Value of a followed series at distance h from the point, rounded to double. */
   series(name: string, h: number): number;
+  /** Taylor coefficient of order k of a followed series at the point. */
+  coefficient(name: string, k: number): T;
   /** First derivative of a followed series at the point, rounded to double. */
   slope(name: string): number;
   /** Moves the point by h (at most the safe step), exactly this double. */
