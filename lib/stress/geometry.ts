@@ -66,7 +66,7 @@ export function opticalFields(geometry: StaticGeometry): OpticalFields {
     let: [["@f", minusGtt], ["@h", grr], ["@r", radius]],
     derivative: {},
     series: OPTICAL.map((name) => `@${name}`),
-    outputs: [],
+    outputs: OPTICAL.map((name) => `@${name}`),
   }, {
     "@s": div(call("log", f), num(2)),
     "@N": div(call("sqrt", h), root),
@@ -75,22 +75,32 @@ export function opticalFields(geometry: StaticGeometry): OpticalFields {
   const accuracy = { order: ORDER, tolerance: 2 ** -52 }; // of the step, which is not used
   const narrow = doubleCode(program, accuracy), wide = doubleDoubleCode(program, accuracy);
   const given = Object.entries(parameters);
+  const varying = new Set(
+    Object.entries(program.series).flatMap(([name, i]) => program.varies[i] ? [name] : []),
+  );
   const A = doubleDouble, exact = given.map(([name, v]) => [name, A.from(v)] as const);
   const quick = new DoubleWalker(narrow, { ...parameters, pi: double.pi }, {}, 1);
   const slow = new DoubleDoubleWalker(wide, { ...Object.fromEntries(exact), pi: A.pi }, {}, 1);
   return {
-    double: (x) => derivativesAt(quick, x),
-    wide: (x) => derivativesAt(slow, A.from(x)),
+    double: (x) => derivativesAt(quick, varying, x),
+    wide: (x) => derivativesAt(slow, varying, A.from(x)),
   };
 }
 
 const FACTORIALS = [1, 1, 2, 6, 24]; // of orders 0 to 4
 
-function derivativesAt<T>(walker: Walker<T>, x: T): Derivatives<T> {
-  const A = walker.arithmetic, list = OPTICAL.map((name) => `@${name}`);
+function derivativesAt<T>(walker: Walker<T>, varying: ReadonlySet<string>, x: T): Derivatives<T> {
+  const A = walker.arithmetic;
   walker.place(x, []);
-  walker.expand(list);
+  walker.expand([...varying]);
+  const values = walker.outputs();
   const of = (name: string) =>
-    FACTORIALS.map((n, k) => A.mul(A.from(n), walker.coefficient(name, k)));
+    FACTORIALS.map((n, k) =>
+      k === 0
+        ? values[name]!
+        : varying.has(name)
+        ? A.mul(A.from(n), walker.coefficient(name, k))
+        : A.from(0)
+    );
   return { s: of("@s"), N: of("@N"), a: of("@a") };
 }

@@ -104,6 +104,16 @@ describe("The tensor of conformal fields", () => {
     }
   });
 
+  it("vanishes on flat space and has the trace of a tube of constant redshift, where formulas are constants", () => {
+    const flat = conformalStress({ coordinate: "r", minusGtt: "1", grr: "1", radius: "r" }, scalar);
+    expect(Object.values(flat.at(2)).map(({ value }) => Math.abs(value))).toEqual([0, 0, 0]);
+    // ds^2 = -dt^2 + dx^2 + b^2 dOmega: F = 4/(3 b^4), E = 0, box R = 0, so the trace is c F/16 pi^2
+    const tube = { coordinate: "x", minusGtt: "1", grr: "1", radius: "b", parameters: { b: 3 } };
+    const { energy, radial, tangential } = conformalStress(tube, scalar).at(5);
+    const trace = -energy.value + radial.value + 2 * tangential.value;
+    expect(trace / (4 / 3 / 81 / 120 / (16 * Math.PI ** 2))).toBeCloseTo(1, 13);
+  });
+
   it("is conserved on a geometry of which no closed form is known", () => {
     // a regularised centre, r -> sqrt(x^2 + l^2)
     const r = "sqrt(x^2+l^2)", g = `(1-2*M/${r})`;
