@@ -67,6 +67,7 @@ export {
   conformalStress,
   type StressAt,
 } from "./stress/conformal_stress.ts";
+export { type MinimalSphere, minimalSphere } from "./stress/minimal_sphere.ts";
 export type { StaticGeometry } from "./stress/geometry.ts";
 export {
   closedForm,

@@ -14,6 +14,7 @@ import {
 import type { Audit } from "../audit.ts";
 import { lightConeAudit, staticAudit } from "./equations.ts";
 import { killingAudit, killingModelAudit, liouvilleAudit, reductionAudit } from "./geometry.ts";
+import { minimalSphereAudit } from "./minimal_sphere.ts";
 import {
   anomalyAudit,
   boulwareAudit,
@@ -67,7 +68,7 @@ export function readyAudits(model?: string): ReadyAudit[] {
     ...about(["swave"], reductionAudit, schwarzschildAudit),
     ...about(["jt"], jtBathAudit),
     ...about([FOUR], anomalyActionAudit, anomalySchwarzschildAudit, anomalyDeSitterAudit),
-    ...about([FOUR], contentAudit),
+    ...about([FOUR], contentAudit, minimalSphereAudit),
   ];
   return model === undefined
     ? all
