@@ -68,6 +68,7 @@ export {
   type StressAt,
 } from "./stress/conformal_stress.ts";
 export { type MinimalSphere, minimalSphere } from "./stress/minimal_sphere.ts";
+export { solutionStress, type StressPlace } from "./stress/solution_stress.ts";
 export type { StaticGeometry } from "./stress/geometry.ts";
 export {
   closedForm,

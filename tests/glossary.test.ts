@@ -34,7 +34,7 @@ function reasonCodes(): string[] {
       const code = Deno.readTextFileSync(`${folder}/${name}`).replace(/\/\*[\s\S]*?\*\//g, "");
       for (
         const m of code.matchAll(
-          /(?:refused|failed|BOUNDARY =|return)\s*\(?\s*["`]([a-z]+(?:-[a-z]+)*): /g,
+          /(?:refused|failed|BOUNDARY =|NO_LEADING_TERM =|return)\s*\(?\s*["`]([a-z]+(?:-[a-z]+)*): /g,
         )
       ) found.add(m[1]!);
     }

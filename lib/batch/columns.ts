@@ -10,6 +10,14 @@ import { MODEL_NAMES, type ModelName, STATE_NAMES, type StateName } from "../mod
 export const LINEAR_DILATON: readonly ModelName[] = ["cghs", "rst", "bpp", "solvable"];
 /** Models of the exactly solvable family. */
 export const SOLVABLE_FAMILY: readonly ModelName[] = ["rst", "bpp", "solvable"];
+/** Models in two dimensions, whose matter is measured by kappa. */
+export const DILATON_MODELS: readonly ModelName[] = [...LINEAR_DILATON, "swave"];
+/** Models that exist in one state only. */
+export const ONLY_STATE: Readonly<Partial<Record<ModelName, StateName>>> = {
+  anomaly4d: "boulware",
+};
+/** Columns that count the fields of anomaly4d; 0 where empty. */
+export const FIELD_COLUMNS = ["real_scalars", "dirac_spinors", "vectors"] as const;
 /** States with radiation at infinity or at the wall. */
 export const BATH_STATES: readonly StateName[] = ["thermal", "hartle-hawking"];
 
@@ -35,20 +43,29 @@ const everywhere = { models: MODEL_NAMES, states: STATE_NAMES } as const;
 const finite = { range: "a finite number", holds: () => true } as const;
 const positive = { range: "> 0", holds: (v: number) => v > 0 } as const;
 
+const fields = { models: ["anomaly4d"], states: STATE_NAMES } as const;
+const count = (parts: 1 | 2) =>
+  ({
+    range: `a ${parts === 1 ? "whole" : "whole or half"} number from 0 to 500000`,
+    holds: (v: number) => v >= 0 && v <= 500_000 && Number.isInteger(parts * v),
+  }) as const;
+
 /** Numeric parameter columns; beside them a table has `case`, `model` and `state`. */
 export const PARAMETER_COLUMNS: readonly ParameterColumn[] = [
   {
     name: "kappa",
     meaning: "Anomaly coefficient N/12",
     unit: "1",
-    ...everywhere,
+    models: DILATON_MODELS,
+    states: STATE_NAMES,
     ...positive,
   },
   {
     name: "n_scalars",
     meaning: "Number N of conformal scalars, kappa = N/12; need not be whole",
     unit: "1",
-    ...everywhere,
+    models: DILATON_MODELS,
+    states: STATE_NAMES,
     ...positive,
   },
   {
@@ -61,7 +78,8 @@ export const PARAMETER_COLUMNS: readonly ParameterColumn[] = [
   },
   {
     name: "mass",
-    meaning: "Mass M = lambda m; swave: Misner-Sharp mass, at the wall where there is one",
+    meaning:
+      "Mass M = lambda m; swave: Misner-Sharp mass, at the wall where there is one; anomaly4d: at infinity",
     unit: "mass",
     ...everywhere,
     ...finite,
@@ -118,6 +136,38 @@ export const PARAMETER_COLUMNS: readonly ParameterColumn[] = [
     ...positive,
   },
   {
+    name: "real_scalars",
+    meaning: "Number of conformal real scalars; 0 where empty",
+    unit: "1",
+    ...fields,
+    ...count(1),
+  },
+  {
+    name: "dirac_spinors",
+    meaning:
+      "Number of massless Dirac spinors, a half for a Weyl or Majorana spinor; 0 where empty",
+    unit: "1",
+    ...fields,
+    ...count(2),
+  },
+  {
+    name: "vectors",
+    meaning: "Number of massless vectors; 0 where empty",
+    unit: "1",
+    ...fields,
+    ...count(1),
+  },
+  {
+    name: "beta",
+    meaning:
+      "Coefficient of box R in 16 pi^2 <T>; depends on the scheme: (N0 + 6 N_D - 18 N1)/180 by the zeta function, " +
+      "+ 12 N1 in dimensional regularisation",
+    unit: "1",
+    ...fields,
+    range: "at most 1e6 in size",
+    holds: (v) => Math.abs(v) <= 1e6,
+  },
+  {
     name: "tolerance",
     meaning: "Relative tolerance on every numeric locus column; 1e-10 where empty",
     unit: "1",
@@ -143,7 +193,7 @@ export const EXCLUSIVE: readonly (readonly string[])[] = [
 ];
 
 /** Columns that a row always gives if its model and state have them. */
-export const ALWAYS: readonly string[] = ["a", "wall_radius"];
+export const ALWAYS: readonly string[] = ["a", "wall_radius", "beta"];
 
 /** Defaults of columns that may stay empty. */
 export const DEFAULTS: Readonly<Record<"lambda" | "tolerance", number>> = {

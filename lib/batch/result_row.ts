@@ -93,7 +93,7 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
     validity: solved ? result.validity ?? "" : "",
     stamp,
   });
-  write("kappa", input.kappa);
+  write("kappa", input.model === "anomaly4d" ? undefined : input.kappa);
   write("lambda", input.lambda);
   write("a", input.a);
   write("wall_radius", input.wallRadius);

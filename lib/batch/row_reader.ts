@@ -15,7 +15,9 @@ import {
   BATH_STATES,
   DEFAULTS,
   EXCLUSIVE,
+  FIELD_COLUMNS,
   LINEAR_DILATON,
+  ONLY_STATE,
   PARAMETER_COLUMNS,
   type ParameterColumn,
 } from "./columns.ts";
@@ -44,6 +46,8 @@ export interface Cells {
   /** Whether the header has the column. */
   readonly has: (column: string) => boolean;
 }
+
+const LARGEST_MASS = 1e70; // of anomaly4d, in Planck masses: beyond, powers leave the range of doubles
 
 type Report = (column: string, text: string) => void;
 
@@ -177,6 +181,26 @@ function checkCavity(values: ReadonlyMap<string, number>, cells: Cells, report: 
   }
 }
 
+/** A sphere in place of a horizon needs a hole and a field. */
+function checkFields(values: ReadonlyMap<string, number>, cells: Cells, report: Report): void {
+  const mass = values.get("mass");
+  if (mass !== undefined && !(mass > 0 && mass <= LARGEST_MASS)) {
+    const text = quoted(cells.text("mass"));
+    report(
+      "mass",
+      `must be > 0 and at most ${LARGEST_MASS} for model anomaly4d: current value is ${text}`,
+    );
+  }
+  if (FIELD_COLUMNS.every((name) => (values.get(name) ?? 0) === 0)) {
+    report(
+      FIELD_COLUMNS[0],
+      `or ${
+        FIELD_COLUMNS.slice(1).join(" or ")
+      } must be > 0 for model anomaly4d: current number is 0`,
+    );
+  }
+}
+
 function optional<K extends string>(key: K, value: number | undefined): { [P in K]?: number } {
   return (value === undefined ? {} : { [key]: value }) as { [P in K]?: number };
 }
@@ -190,7 +214,7 @@ function rowInput(
   return {
     model,
     state,
-    kappa: values.get("kappa") ?? values.get("n_scalars")! / 12,
+    kappa: model === "anomaly4d" ? 0 : values.get("kappa") ?? values.get("n_scalars")! / 12,
     ...optional(
       "lambda",
       LINEAR_DILATON.includes(model) ? values.get("lambda") ?? DEFAULTS.lambda : undefined,
@@ -204,6 +228,14 @@ function rowInput(
     ),
     ...optional("a", values.get("a")),
     ...optional("wallRadius", values.get("wall_radius")),
+    ...(model === "anomaly4d"
+      ? {
+        realScalars: values.get("real_scalars") ?? 0,
+        diracSpinors: values.get("dirac_spinors") ?? 0,
+        vectors: values.get("vectors") ?? 0,
+      }
+      : {}),
+    ...optional("beta", values.get("beta")),
     tolerance: values.get("tolerance") ?? DEFAULTS.tolerance,
   };
 }
@@ -233,7 +265,11 @@ export function readRow(cells: Cells): {
     const text = quoted(cells.text("n_scalars"));
     report("n_scalars", `must be so large that kappa = N/12 is not 0: current value is ${text}`);
   }
-  if (model !== undefined && state !== undefined) checkGroups(cells, model, state, report);
+  const only = model && ONLY_STATE[model];
+  if (only !== undefined && state !== undefined && state !== only) {
+    report("state", `must be ${only} for model ${model}: current value is ${quoted(state)}`);
+  } else if (model !== undefined && state !== undefined) checkGroups(cells, model, state, report);
+  if (model === "anomaly4d") checkFields(values, cells, report);
   if (model === "swave" && state !== undefined && BATH_STATES.includes(state)) {
     checkCavity(values, cells, report);
   }

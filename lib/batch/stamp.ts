@@ -66,6 +66,10 @@ export function stampInputs(input: RowInput): Readonly<Record<string, string | n
     bath_ratio_minus_one: input.bathRatioMinusOne,
     a: input.a,
     wall_radius: input.wallRadius,
+    real_scalars: input.realScalars,
+    dirac_spinors: input.diracSpinors,
+    vectors: input.vectors,
+    beta: input.beta,
     tolerance: input.tolerance,
   };
   const present = Object.entries(inputs).filter(([, value]) => value !== undefined);

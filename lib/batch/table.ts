@@ -3,7 +3,7 @@
  *
  * @module
  */
-import { EXCLUSIVE, TABLE_COLUMNS } from "./columns.ts";
+import { EXCLUSIVE, FIELD_COLUMNS, TABLE_COLUMNS } from "./columns.ts";
 import { type CsvRecord, lengthFault, readCsv } from "./csv.ts";
 import { type Fault, quoted, TableError } from "./fault.ts";
 import { nearest } from "./nearest.ts";
@@ -31,8 +31,9 @@ function headerFaults({ fields, line }: CsvRecord): Fault[] {
   for (const name of REQUIRED) {
     if (!seen.has(name)) faults.push({ line, column: name, text: "is missing in the header" });
   }
+  const counted = FIELD_COLUMNS.some((name) => seen.has(name)); // rows may have no kappa
   for (const group of NEEDED_BY_ALL) {
-    if (group.some((name) => seen.has(name))) continue;
+    if (group.some((name) => seen.has(name)) || (counted && group[0] === "kappa")) continue;
     const text = `is missing in the header, as is ${
       group.slice(1).join(" and ")
     }: every row needs one`;
@@ -63,7 +64,10 @@ export function readTable(bytes: Uint8Array): readonly TableRow[] {
     faults.push({ line: header.line, text: "at least one row must follow the header" });
   }
   const index = new Map(header.fields.map((name, i) => [name, i]));
-  const absent = NEEDED_BY_ALL.filter((group) => !group.some((name) => index.has(name))).flat();
+  const counted = FIELD_COLUMNS.some((name) => index.has(name));
+  const absent = NEEDED_BY_ALL.filter((group) =>
+    !group.some((name) => index.has(name)) && !(counted && group[0] === "kappa")
+  ).flat();
   const rows: TableRow[] = [], lineOfCase = new Map<string, number>();
   for (const record of rest) {
     const short = lengthFault(record, header.fields.length);

@@ -14,6 +14,7 @@ import { decideZero } from "../expr/zero.ts";
 import { CATALOGUE } from "./catalogue/mod.ts";
 import { inDilaton, inRoot } from "./form/dilaton.ts";
 import { linearDilaton } from "./form/linear_dilaton.ts";
+import { MINIMAL_SPHERE } from "./form/minimal_sphere.ts";
 import { spherical } from "./form/spherical.ts";
 import type { ModelName } from "./input.ts";
 import type { Family, Model } from "./model.ts";
@@ -22,8 +23,8 @@ import type { Family, Model } from "./model.ts";
 export interface CompiledModel {
   /** Name in the catalogue. */
   readonly name: ModelName;
-  /** Asymptotic family. */
-  readonly family: Family;
+  /** Asymptotic family, or the closure in four dimensions. */
+  readonly family: Family | "anomaly4d";
   /** Whether 1 + 2 h + k vanishes identically (the exactly solvable family). */
   readonly solvable: boolean;
   /** Names of the model's own parameters. */
@@ -137,6 +138,22 @@ function withPi(family: Family, own: readonly string[]): readonly string[] {
   return family === "spherical" ? [...own, "pi"] : own;
 }
 
+/** The minimal sphere of the anomaly's leading tensor: no dilaton model, one form. */
+const ANOMALY: CompiledModel = {
+  name: "anomaly4d",
+  family: "anomaly4d",
+  solvable: false,
+  parameters: [],
+  expressions: {
+    ...Object.fromEntries(MINIMAL_SPHERE.let),
+    ...Object.fromEntries(
+      Object.entries(MINIMAL_SPHERE.derivative).map(([n, text]) => [`${n}_u`, text]),
+    ),
+    lng: "log((a+beta/2)/(pi*M^2))",
+  },
+  programs: { closure: lower(MINIMAL_SPHERE, {}) },
+};
+
 /**
  * Compiles a catalogue model.
  *
@@ -150,6 +167,7 @@ function withPi(family: Family, own: readonly string[]): readonly string[] {
  * ```
  */
 export async function compileModel(name: ModelName): Promise<CompiledModel> {
+  if (name === "anomaly4d") return ANOMALY;
   const model = CATALOGUE[name], f = await derivedFunctions(model);
   await checkFamily(model, f);
   const solvable = model.family === "linear-dilaton" && isNum(f.delta!, 0);

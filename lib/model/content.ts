@@ -75,5 +75,17 @@ export function anomalyOf(content: FieldContent, scheme: BetaScheme): AnomalyCoe
   };
 }
 
+/** The exact rational that a double is. */
+export function rationalOf(x: number): Num {
+  let q = 1n;
+  for (; !Number.isInteger(x); x *= 2) q *= 2n;
+  return num(BigInt(x), q);
+}
+
+/** a + beta/2, which measures the leading tensor at a would-be horizon. */
+export function leadingCoefficient({ a, beta }: AnomalyCoefficients): Num {
+  return num(2n * a.p * beta.q + beta.p * a.q, 2n * a.q * beta.q);
+}
+
 /** The content of N = 4 super Yang-Mills theory for one generator of the gauge group; times N^2 for large N. */
 export const SUPER_YANG_MILLS: FieldContent = { scalars: 6, weyl: 4, vectors: 1 };

@@ -5,9 +5,13 @@
  */
 
 /** Models of the catalogue. */
-export const MODEL_NAMES = ["cghs", "rst", "bpp", "solvable", "swave"] as const;
+export const MODEL_NAMES = ["cghs", "rst", "bpp", "solvable", "swave", "anomaly4d"] as const;
 /** One of {@linkcode MODEL_NAMES}. */
 export type ModelName = (typeof MODEL_NAMES)[number];
+/** Models of the catalogue: two dimensions, H, K and V. */
+export type DilatonName = Exclude<ModelName, "anomaly4d">;
+/** Models whose dilaton is an areal radius, in Planck units. */
+export const RADIAL_MODELS: readonly ModelName[] = ["swave", "anomaly4d"];
 
 /** Quantum states of the matter fields. */
 export const STATE_NAMES = ["boulware", "thermal", "hartle-hawking"] as const;
@@ -23,7 +27,7 @@ export interface RowInput {
   readonly model: ModelName;
   /** State name. */
   readonly state: StateName;
-  /** Anomaly coefficient N/12, positive. */
+  /** Anomaly coefficient N/12, positive; 0 for anomaly4d, whose fields are counted below. */
   readonly kappa: number;
   /** Linear-dilaton scale, positive (inverse length); linear-dilaton models only. */
   readonly lambda?: number;
@@ -39,6 +43,14 @@ export interface RowInput {
   readonly a?: number;
   /** Areal radius of the cavity wall; swave with a bath only. */
   readonly wallRadius?: number;
+  /** Conformal real scalars; anomaly4d only. */
+  readonly realScalars?: number;
+  /** Dirac spinors, halves are Weyl or Majorana spinors; anomaly4d only. */
+  readonly diracSpinors?: number;
+  /** Massless vectors; anomaly4d only. */
+  readonly vectors?: number;
+  /** Coefficient of box R in 16 pi^2 <T>, exactly this double; anomaly4d only. */
+  readonly beta?: number;
   /** Relative tolerance on every numeric locus column. */
   readonly tolerance: number;
 }

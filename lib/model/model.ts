@@ -5,7 +5,7 @@
  *
  * @module
  */
-import type { ModelName } from "./input.ts";
+import type { DilatonName } from "./input.ts";
 
 /** Asymptotic family: fixes the far-region form of the equations and the natural temperature. */
 export type Family = "linear-dilaton" | "spherical";
@@ -13,7 +13,7 @@ export type Family = "linear-dilaton" | "spherical";
 /** A model as data; expression texts in the grammar of `parse`, with `phi` the dilaton. */
 export interface Model {
   /** Name in tables. */
-  readonly name: ModelName;
+  readonly name: DilatonName;
   /** Asymptotic family. */
   readonly family: Family;
   /** Classical parts of H, K, V. */

@@ -3,7 +3,7 @@
  *
  * @module
  */
-import type { RowInput } from "../model/input.ts";
+import { RADIAL_MODELS, type RowInput } from "../model/input.ts";
 import { type DoubleDouble, doubleDouble as A } from "../solve/arithmetic/double_double.ts";
 import { bounded, type Comparison } from "./bound.ts";
 import type { Bounded, NumericColumn } from "./result.ts";
@@ -25,7 +25,9 @@ function sizeOf(name: string, value: number, input: RowInput): number {
   const size = Math.abs(value), floor = 2 ** -20; // logarithms: errors of their argument are absolute
   if (name === "mass") return Math.max(size, input.kappa * (input.lambda ?? 0));
   if (name === "lngtt") return Math.max(size, 1);
-  if (name === "dilaton_locus" && input.model !== "swave") return Math.max(size, floor);
+  if (name === "dilaton_locus" && !RADIAL_MODELS.includes(input.model)) {
+    return Math.max(size, floor);
+  }
   return size;
 }
 

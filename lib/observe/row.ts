@@ -76,11 +76,13 @@ export function computeRow(
   if (fault) {
     return { result: { ...NOTHING, outcome: "failed", reason: fault, evidence: joined.evidence } };
   }
-  const { kind } = wide, curvature = numbers.curvature_locus?.value;
-  const followed = options.profile || kind === "throat";
+  const { kind } = wide, alpha = joined.evidence["acceleration"]?.value;
+  const curvature = alpha === undefined ? numbers.curvature_locus?.value : alpha * alpha;
+  const two = model.family !== "anomaly4d"; // the sphere's inner side and profile are not followed
+  const followed = two && (options.profile || kind === "throat");
   const inner = followed
     ? innerEnd(engines.double(record), record, input, kind)
-    : { ...endOf(kind), locusStep: 0 };
+    : { ...(two ? endOf(kind) : { end: "not-followed" as const }), locusStep: 0 };
   const result: RowResult = {
     outcome: "solved",
     reason: "",
@@ -90,7 +92,7 @@ export function computeRow(
     validity: validity(input, curvature, wide.separation?.hi),
     evidence: joined.evidence,
   };
-  if (!options.profile || numbers.dilaton_locus === undefined) return { result };
+  if (!options.profile || numbers.dilaton_locus === undefined || !two) return { result };
   let frame: Frame | undefined, locusStep = 0;
   if (input.state === "hartle-hawking") {
     if (kind !== "horizon") return { result };

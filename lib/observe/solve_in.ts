@@ -6,6 +6,7 @@
 import type { RowInput } from "../model/input.ts";
 import type { Engine } from "../solve/engine.ts";
 import type { HorizonRoot } from "../solve/horizon_root.ts";
+import { anomalyRow } from "./anomaly_row.ts";
 import { linearHartleHawking, linearHorizonGuess } from "./linear_hartle_hawking.ts";
 import { linearRow } from "./linear_row.ts";
 import type { Solution } from "./solution.ts";
@@ -13,6 +14,7 @@ import { sphericalHartleHawking, sphericalHorizonGuess, sphericalRow } from "./s
 
 /** Solves a row in one arithmetic. */
 export function solveIn<T>(engine: Engine<T>, input: RowInput, guess?: HorizonRoot): Solution<T> {
+  if (engine.model.family === "anomaly4d") return anomalyRow(engine, input);
   const linear = engine.model.family === "linear-dilaton";
   if (input.state === "hartle-hawking") {
     return linear

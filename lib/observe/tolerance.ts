@@ -3,7 +3,7 @@
  *
  * @module
  */
-import type { RowInput } from "../model/input.ts";
+import { RADIAL_MODELS, type RowInput } from "../model/input.ts";
 import type { Bounded, NumericColumn } from "./result.ts";
 
 /**
@@ -11,7 +11,7 @@ import type { Bounded, NumericColumn } from "./result.ts";
  * models absolute; the mass relative to max(|m|, kappa); -g_tt that underflows is judged by its logarithm.
  */
 export function unmet(input: RowInput, numbers: Partial<Record<NumericColumn, Bounded>>): string {
-  const spherical = input.model === "swave";
+  const spherical = RADIAL_MODELS.includes(input.model);
   for (const [name, b] of Object.entries(numbers)) {
     if (!b.error || !Number.isFinite(b.value)) continue;
     if (name === "minus_gtt_locus" && b.value < 1e-300) continue;

@@ -2,12 +2,12 @@
  * Where a row leaves the domain in which semiclassical results can be trusted.
  *
  * Thresholds (own choice, stated in DEVELOPERS.md): the locus within a tenth of the critical one; curvature
- * above a tenth of the Planck value (spherical) or ten times that of every classical linear-dilaton
+ * above a tenth of the Planck value (spherical; anomaly4d: the acceleration squared) or ten times that of every classical linear-dilaton
  * horizon, 4 lambda^2; fewer than 24 scalars, where the ghosts' -24 is no longer small.
  *
  * @module
  */
-import type { RowInput } from "../model/input.ts";
+import { RADIAL_MODELS, type RowInput } from "../model/input.ts";
 
 /** Codes that `validity` can hold. */
 export const VALIDITY_CODES = ["near-critical", "high-curvature", "few-fields"] as const;
@@ -24,6 +24,13 @@ export const THRESHOLDS = {
   fields: 24,
 } as const;
 
+/** How many fields take part. */
+function fieldsOf(
+  { model, kappa, realScalars = 0, diracSpinors = 0, vectors = 0 }: RowInput,
+): number {
+  return model === "anomaly4d" ? realScalars + 2 * diracSpinors + vectors : 12 * kappa;
+}
+
 /** `inside`, or the codes that apply joined by `;`. */
 export function validity(
   input: RowInput,
@@ -32,10 +39,10 @@ export function validity(
 ): string {
   const codes: string[] = [];
   if (separation !== undefined && separation < THRESHOLDS.separation) codes.push("near-critical");
-  const cutoff = input.model === "swave"
+  const cutoff = RADIAL_MODELS.includes(input.model)
     ? THRESHOLDS.planckCurvature
     : THRESHOLDS.dilatonCurvature * 4 * input.lambda! * input.lambda!;
   if (curvature !== undefined && Math.abs(curvature) > cutoff) codes.push("high-curvature");
-  if (12 * input.kappa < THRESHOLDS.fields) codes.push("few-fields");
+  if (fieldsOf(input) < THRESHOLDS.fields) codes.push("few-fields");
   return codes.join(";") || "inside";
 }

@@ -16,10 +16,11 @@ import type { ResultRow } from "./result_rows.ts";
 export const KINDS_MAP_TITLE = "Map of kinds";
 
 const MASS: Axis = { quantity: "mass", symbol: "m/\u03ba", unit: "dimensionless" };
+const PLANCK_MASS: Axis = { quantity: "mass", symbol: "M", unit: "Planck masses" };
 const SWAVE_MASS: Axis = { quantity: "mass", symbol: "M/\u221a\u03ba", unit: "Planck masses" };
 const BATH: Axis = { quantity: "bath ratio", symbol: "\u03c4", unit: "dimensionless" };
 /** Axes of the figure. */
-export const KINDS_MAP_AXES: readonly Axis[] = [MASS, SWAVE_MASS, BATH];
+export const KINDS_MAP_AXES: readonly Axis[] = [MASS, PLANCK_MASS, SWAVE_MASS, BATH];
 
 /** Options of {@linkcode kindsMap}. */
 export interface KindsMapOptions {
@@ -47,13 +48,20 @@ export interface MapPlace {
  */
 export function mapPlace(row: ResultRow): MapPlace {
   const { kappa, lambda = 1, mass, bath_ratio: bath } = row.numbers;
-  const scaled = row.model === "swave" ? mass / Math.sqrt(kappa) : mass / lambda / kappa;
+  const scaled = row.model === "anomaly4d"
+    ? mass
+    : row.model === "swave"
+    ? mass / Math.sqrt(kappa)
+    : mass / lambda / kappa;
   const place = Number.isFinite(scaled) ? { row, mass: scaled } : { row };
   const decided = row.outcome === "solved" && row.kind !== "undecided";
   if (decided && Number.isFinite(bath)) return { ...place, bath };
   const lane = row.outcome === "refused" || row.outcome === "failed" ? row.outcome : "undecided";
   return { ...place, lane };
 }
+
+const massAxis = (model: string): Axis =>
+  model === "anomaly4d" ? PLANCK_MASS : model === "swave" ? SWAVE_MASS : MASS;
 
 const MARGINS = { left: 38, right: 8, top: 15, bottom: 24 } as const;
 const PLANE_HEIGHT = 105;
@@ -159,7 +167,7 @@ function panel(
     heading: [{ text: `${at.model}: ${axisLabel(BATH)}` }],
     x,
     y,
-    xLabel: axisLabel(at.model === "swave" ? SWAVE_MASS : MASS),
+    xLabel: axisLabel(massAxis(at.model)),
     marks,
   });
 }

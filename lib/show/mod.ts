@@ -21,6 +21,7 @@ export { type ChangedParameters, type ParameterOption, solveAgain } from "./solv
 export {
   type AboveOption,
   type Absent,
+  type AnomalyOptions,
   type BathOptions,
   type Either,
   type FamilyOptions,

@@ -61,11 +61,25 @@ export type SWaveOptions =
     | { readonly state: "hartle-hawking" } & Either<MassOption, HorizonOption> & WallOption
   );
 
+/** Fields of four dimensions: at least one number above 0; `beta` depends on the scheme. */
+export type AnomalyOptions =
+  & {
+    readonly model: "anomaly4d";
+    readonly state: "boulware";
+    readonly realScalars?: number;
+    readonly diracSpinors?: number;
+    readonly vectors?: number;
+    readonly beta: number;
+  }
+  & MassOption;
+
 /** What a single solution is asked for: the columns of a parameter table in camel case. */
 export type SolveOptions =
-  & MatterOptions
   & ToleranceOption
-  & (LinearDilatonOptions | SWaveOptions);
+  & (
+    | MatterOptions & (LinearDilatonOptions | SWaveOptions)
+    | AnomalyOptions & Absent<{ kappa: 0; nScalars: 0 }>
+  );
 
 /** Name of a column as an option. */
 export const camel = (column: string): string =>

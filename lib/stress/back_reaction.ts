@@ -46,6 +46,13 @@ export interface BackReaction {
   /** The correction at radius r. */
   at(r: number): Correction;
   /**
+   * Relative first-order change of the horizon's temperature for clocks at radius r, against the vacuum hole of the same
+   * horizon radius.
+   *
+   * @throws {RangeError} unless the start is the horizon.
+   */
+  temperatureShift(r: number): Bounded;
+  /**
    * Where the relative change of -g_tt first reaches `fraction` in size on the way from the start, as r/2M - 1 in
    * double precision (relative error below 1e-6); undefined if it does not do so outside r/2M - 1 = 1e-60.
    */
@@ -121,19 +128,43 @@ export function backReaction(source: RadialSource, mass: number, from: number): 
       return new DoubleDoubleWalker(fine, { M: A.from(mass), pi: A.pi }, floors, 0.01);
     },
   };
-  const at = (r: number): Correction => {
+  const one = (v: DoubleDouble, other: number) =>
+    bounded(v, v.hi - other, Math.abs(v.hi), AGAINST_DOUBLE);
+  /** m, psi and the relative change of -g_tt at r, in both arithmetics. */
+  const change = (r: number) => {
     const A = doubleDouble, two = A.mul(A.from(2), A.from(mass)), gap = A.sub(A.from(r), two);
     const of = (radius: number) => radius === Infinity ? A.from(0) : A.div(two, A.from(radius));
     const x = run(walkers.quick(), start, 2 * mass / r);
     const y = run(walkers.wide(), of(from), of(r));
-    const change = A.mul(A.from(2), A.sub(y.psi, A.div(y.m, gap)));
-    const quick = 2 * (x.psi - x.m / (r - 2 * mass));
-    const one = (v: DoubleDouble, other: number) =>
-      bounded(v, v.hi - other, Math.abs(v.hi), AGAINST_DOUBLE);
-    return { m: one(y.m, x.m), psi: one(y.psi, x.psi), relative: one(change, quick) };
+    const wide = A.mul(A.from(2), A.sub(y.psi, A.div(y.m, gap)));
+    return { x, y, wide, quick: 2 * (x.psi - x.m / (r - 2 * mass)) };
+  };
+  const at = (r: number): Correction => {
+    const { x, y, wide, quick } = change(r);
+    return { m: one(y.m, x.m), psi: one(y.psi, x.psi), relative: one(wide, quick) };
+  };
+  /** dm/dw at the horizon over M is -8 pi r^2 epsilon, what energy there takes off the surface gravity. */
+  const slope = <T>(walker: Walker<T>): T => {
+    const A = walker.arithmetic;
+    walker.place(A.from(1), [A.from(0), A.from(0)]);
+    walker.expand([]);
+    return A.div(walker.coefficient("m", 1), A.from(mass));
+  };
+  const temperatureShift = (r: number): Bounded => {
+    if (from !== 2 * mass) {
+      throw new RangeError(
+        `Cannot give the temperature as the start must be the horizon 2M = ${
+          2 * mass
+        }: current start is ${from}`,
+      );
+    }
+    const A = doubleDouble, { wide, quick } = change(r), half = A.ratio(1n, 2n);
+    const fine = A.sub(slope(walkers.wide()), A.mul(half, wide));
+    return one(fine, slope(walkers.quick()) - quick / 2);
   };
   return {
     at,
+    temperatureShift,
     reaches: (fraction) => {
       const code = doubleCode(along("d"), SETTINGS.double);
       const walker = new DoubleWalker(code, { M: mass, pi: double.pi }, floors, 0.01);

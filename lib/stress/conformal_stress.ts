@@ -84,6 +84,21 @@ function values<T>(
   return out;
 }
 
+/** Evaluates the empty state's tensor from derivatives, in double precision. */
+export function quickTensor(
+  coefficients: AnomalyCoefficients,
+): (at: Derivatives<number>) => StressAt<number> {
+  const program = tensorProgram(), evaluate = emitEvaluateDouble(program);
+  const none = new Float64Array(0), list = new Float64Array(program.parameters.length);
+  const out = new Float64Array(3);
+  return (at) => {
+    const known = values(double, at, coefficients);
+    program.parameters.forEach((name, i) => list[i] = known[name]!);
+    evaluate(none, 0, list, out);
+    return { energy: -out[0]!, radial: out[1]!, tangential: out[2]! };
+  };
+}
+
 /** Which state of which fields. */
 export interface ConformalFields {
   /** How many fields of each spin. */
@@ -111,6 +126,9 @@ function gasOf({ content, surfaceGravity }: ConformalFields): number {
  * The stress tensor of conformal fields on a static geometry: from the anomaly in the empty state, for scalars also
  * in the state that is regular on a horizon (Page's approximation: a gas at the local temperature is added).
  *
+ * Where the geometry is not Ricci-flat a multiple of the Bach tensor stays open (a finite Weyl-squared term); it is fixed
+ * here by the unit of t: the proper time of a place where -g_tt = 1.
+ *
  * @param geometry The metric, by formulas.
  * @param fields Content, scheme of beta, state.
  * @returns Evaluators; components in units hbar = c = 1, inverse length to the fourth.
@@ -130,8 +148,7 @@ export function conformalStress(
 ): ConformalStress {
   const coefficients = anomalyOf(fields.content, fields.scheme), gravity = gasOf(fields);
   const optical = opticalFields(geometry), program = tensorProgram();
-  const evaluate = emitEvaluateDouble(program), out = new Float64Array(3);
-  const none = new Float64Array(0), list = new Float64Array(program.parameters.length);
+  const evaluate = quickTensor(coefficients);
   /** pi^2/90 N T^4 at the local temperature: N (surface gravity)^4/(1440 pi^2 (-g_tt)^2). */
   const gas = <T>(A: Arithmetic<T>, s: T): T => {
     const k = A.from(gravity), k2 = A.mul(k, k), e = A.exp(A.mul(A.from(-4), s));
@@ -148,10 +165,8 @@ export function conformalStress(
     };
   };
   const quick = (x: number): StressAt<number> => {
-    const at = optical.double(x), known = values(double, at, coefficients);
-    program.parameters.forEach((name, i) => list[i] = known[name]!);
-    evaluate(none, 0, list, out);
-    return sum(double, out[0]!, out[1]!, out[2]!, at.s[0]!);
+    const at = optical.double(x), { energy, radial, tangential } = evaluate(at);
+    return sum(double, -energy, radial, tangential, at.s[0]!);
   };
   const at = (x: number): StressAt<Bounded> => {
     const A = doubleDouble, first = quick(x), fine = optical.wide(x);

@@ -9,14 +9,15 @@
  * @module
  */
 import { lower } from "../expr/lower.ts";
-import type { AnomalyCoefficients } from "../model/content.ts";
+import { type AnomalyCoefficients, leadingCoefficient } from "../model/content.ts";
 import { MINIMAL_SPHERE } from "../model/form/minimal_sphere.ts";
+import { NO_LEADING_TERM } from "../observe/anomaly_row.ts";
 import { AGAINST_DOUBLE, bounded } from "../observe/bound.ts";
 import type { Bounded } from "../observe/result.ts";
+import { inward, startOf } from "../solve/anomaly/inward.ts";
 import { type DoubleDouble, doubleDouble } from "../solve/arithmetic/double_double.ts";
 import { doubleDoubleCode, DoubleDoubleWalker } from "../solve/series/double_double_walker.ts";
 import { doubleCode, DoubleWalker } from "../solve/series/double_walker.ts";
-import type { Walker } from "../solve/series/walker.ts";
 import { SETTINGS } from "../solve/settings.ts";
 
 /** A minimal sphere, or why there is none. */
@@ -39,13 +40,6 @@ const narrow = doubleCode(program, SETTINGS.double);
 const fine = doubleDoubleCode(program, SETTINGS.doubleDouble);
 
 const LARGEST = 1e70; // mass; alpha^4 leaves the range of doubles beyond
-const LEFT_OUT = 1e-36; // relative size of the source where the run starts from vacuum
-
-interface End<T> {
-  readonly L: T;
-  readonly psi: T;
-  readonly u: T;
-}
 
 /**
  * The minimal sphere of a hole of mass M, G = 1.
@@ -64,28 +58,21 @@ interface End<T> {
  * if (Math.abs(sphere.minusGtt.value / sphere.law - 1) > 1e-3) throw new Error("far from the law");
  * ```
  */
-export function minimalSphere({ a, beta }: AnomalyCoefficients, mass: number): MinimalSphere {
+export function minimalSphere(coefficients: AnomalyCoefficients, mass: number): MinimalSphere {
   if (!(mass > 0 && mass <= LARGEST)) {
     throw new RangeError(
       `Cannot find the minimal sphere as the mass must lie in (0, ${LARGEST}]: current value is ${mass}`,
     );
   }
   const A = doubleDouble, two = A.from(2);
-  const ratio = ({ p, q }: { p: bigint; q: bigint }) => A.ratio(p, q);
-  const leading = A.add(ratio(a), A.div(ratio(beta), two)); // exact sign: both are rationals
-  if (2n * a.p * beta.q + beta.p * a.q <= 0n) {
-    const reason =
-      "no-leading-term: a + beta/2 must be positive for a minimal sphere of this kind; " +
-      `for this content and scheme it is ${leading.hi}`;
-    return { outcome: "refused", reason };
-  }
+  const { p, q } = leadingCoefficient(coefficients), leading = A.ratio(p, q);
+  if (p <= 0n) return { outcome: "refused", reason: `${NO_LEADING_TERM}${leading.hi}` };
   const M = A.from(mass), lng = A.log(A.div(leading, A.mul(A.pi, A.mul(M, M))));
-  // the source is of relative size g y^6 far out
-  const u = Math.min(Math.log(1e-3), (Math.log(LEFT_OUT) - lng.hi) / 6);
+  const u = startOf(lng.hi);
   const quick = inward(new DoubleWalker(narrow, { lng: lng.hi }, {}, 0.5), u);
   const wide = inward(new DoubleDoubleWalker(fine, { lng }, {}, 0.5), u);
   if (!quick || !wide) {
-    return { outcome: "refused", reason: "no-minimal-sphere: the radius has no least value" };
+    return { outcome: "refused", reason: "step-limit: the minimal sphere was not reached" };
   }
   const radius = A.mul(M, A.exp(wide.L)), redshift = A.exp(A.mul(two, wide.psi));
   const acceleration = A.div(A.exp(wide.u), radius);
@@ -99,23 +86,4 @@ export function minimalSphere({ a, beta }: AnomalyCoefficients, mass: number): M
     acceleration: one(acceleration, Math.exp(quick.u) / quickRadius),
     law: Math.sqrt(leading.hi / Math.PI) / (8 * mass),
   };
-}
-
-/** From the vacuum at u to the sphere; undefined if there is none. */
-function inward<T>(walker: Walker<T>, u: number): End<T> | undefined {
-  const A = walker.arithmetic, one = A.from(1), start = A.from(u), y = A.exp(start);
-  // Schwarzschild: p = sqrt(1 + y^2) - y, R = 2/(1 - p^2) = 1/(y p), psi = ln p
-  const lnp = A.neg(A.log(A.add(y, A.sqrt(A.add(one, A.mul(y, y))))));
-  walker.place(start, [A.neg(A.add(start, lnp)), lnp]);
-  for (let i = 0; i < SETTINGS.steps; i++) {
-    const step = walker.expand(["gap"]), gap = A.toNumber(walker.outputs()["gap"]!);
-    if (!(step > 0)) return undefined;
-    const [L, psi] = walker.state() as [T, T];
-    if (Math.abs(gap) < 8 * A.epsilon * Math.max(1, Math.abs(u))) {
-      return { L, psi, u: walker.time() };
-    }
-    const newton = -gap / walker.slope("gap");
-    walker.advance(Math.abs(newton) < step ? newton : Math.sign(newton) * step);
-  }
-  return undefined;
 }

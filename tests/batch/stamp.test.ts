@@ -54,6 +54,33 @@ describe("A stamp", () => {
   });
 });
 
+describe("The inputs of a stamp", () => {
+  it("are all fields of a row: whoever adds one to the type must add it here, and then to the stamp", () => {
+    const full: Required<RowInput> = {
+      model: "rst",
+      state: "thermal",
+      kappa: 1,
+      lambda: 2,
+      mass: 3,
+      massAboveCritical: 4,
+      horizonDilaton: 5,
+      bathRatioMinusOne: 6,
+      a: 7,
+      wallRadius: 8,
+      realScalars: 9,
+      diracSpinors: 10,
+      vectors: 11,
+      beta: 12,
+      tolerance: 13,
+    };
+    const stamp = stamper(context)(full);
+    for (const name of Object.keys(full) as (keyof RowInput)[]) {
+      const other = { ...full, [name]: typeof full[name] === "number" ? 0.5 : "swave" };
+      expect(stamper(context)(other as RowInput), name).not.toBe(stamp);
+    }
+  });
+});
+
 describe("The numeric core", () => {
   it("holds the files of the row solver and the packages they import, not the catalogue, figures or tests", async () => {
     const { core, pins, runtime } = await coreIdentity();

@@ -12,7 +12,9 @@ interface Action {
 function action(row: ShortRow, phi: number): Action {
   if (row.model === "swave") return { Hp: Math.PI * phi, K: Math.PI, V: Math.PI, Vp: 0 };
   const E = Math.exp(-2 * phi),
-    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[row.model];
+    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[
+      row.model as "solvable"
+    ];
   const h = a === undefined ? 0 : a - 1, k = a === undefined ? 0 : 1 - 2 * a;
   return { Hp: -2 * E + row.kappa * h, K: 4 * E + row.kappa * k, V: 4 * E, Vp: -8 * E };
 }

@@ -28,7 +28,9 @@ const CASES: readonly ShortRow[] = [
 function action(row: ShortRow, kappa: number, phi: number): readonly number[] {
   if (row.model === "swave") return [Math.PI * phi, Math.PI, Math.PI, 0, Math.PI, 0];
   const E = Math.exp(-2 * phi),
-    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[row.model];
+    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[
+      row.model as "solvable"
+    ];
   const h = a === undefined ? 0 : a - 1, k = a === undefined ? 0 : 1 - 2 * a;
   return [-2 * E + kappa * h, 4 * E, 4 * E + kappa * k, -8 * E, 4 * E, -8 * E];
 }

@@ -9,7 +9,9 @@ import { recordOf, type ShortRow } from "./solved.ts";
 function action(row: ShortRow, phi: number): readonly number[] {
   if (row.model === "swave") return [Math.PI * phi, Math.PI, Math.PI, 0, Math.PI, 0];
   const E = Math.exp(-2 * phi),
-    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[row.model];
+    a = { cghs: undefined, rst: 0.5, bpp: 0, solvable: row.a }[
+      row.model as "solvable"
+    ];
   const h = a === undefined ? 0 : a - 1, k = a === undefined ? 0 : 1 - 2 * a;
   return [-2 * E + row.kappa * h, 4 * E, 4 * E + row.kappa * k, -8 * E, 4 * E, -8 * E];
 }

@@ -68,6 +68,18 @@ describe("First-order back-reaction", () => {
     );
   });
 
+  it("shifts the temperature by what Page's energy at the horizon takes off, and by the redshift to the clock", () => {
+    const M = 3,
+      unit = Math.PI ** 2 / 90 / (8 * Math.PI * M) ** 4,
+      hole = backReaction(HOT, M, 2 * M);
+    for (const r of [6.5, 20]) {
+      // -g_tt at r and the surface gravity (1 - 8 pi r_h^2 epsilon)/(4 M), epsilon = -36 units, to first order
+      const expected = 32 * Math.PI * M ** 2 * 36 * unit - hole.at(r).relative.value / 2;
+      expect(hole.temperatureShift(r).value / expected).toBeCloseTo(1, 13);
+    }
+    expect(() => backReaction(HOT, 1, 5).temperatureShift(7)).toThrow("must be the horizon");
+  });
+
   it("refuses a start inside the hole, names it does not know, and a pole on the way", () => {
     expect(() => backReaction(HOT, 1, 1)).toThrow("the start at 2M or outside");
     expect(() => backReaction(HOT, 0, 1)).toThrow("M must be positive");
