@@ -4,6 +4,7 @@
  * @module
  */
 import { COMPARISON_AXES, COMPARISON_TITLE } from "./comparison_figure.ts";
+import { HIERARCHY_AXES, HIERARCHY_TITLE } from "./hierarchy.ts";
 import { KINDS_MAP_AXES, KINDS_MAP_TITLE, kindsMap } from "./kinds_map.ts";
 import { LINEAR_DILATON_AXES, SWAVE_AXES } from "./profile_axes.ts";
 import type { Axis } from "./axis.ts";
@@ -11,7 +12,12 @@ import { PROFILE_TITLE, profilePanels } from "./profile_panels.ts";
 import { readProfileRows, readResultRows, type ResultRow } from "./result_rows.ts";
 
 /** Titles of all figures. */
-export const FIGURE_TITLES: readonly string[] = [KINDS_MAP_TITLE, PROFILE_TITLE, COMPARISON_TITLE];
+export const FIGURE_TITLES: readonly string[] = [
+  KINDS_MAP_TITLE,
+  PROFILE_TITLE,
+  COMPARISON_TITLE,
+  HIERARCHY_TITLE,
+];
 
 /** Axes of all figures. */
 export const FIGURE_AXES: readonly Axis[] = [
@@ -19,6 +25,7 @@ export const FIGURE_AXES: readonly Axis[] = [
   ...Object.values(LINEAR_DILATON_AXES),
   ...Object.values(SWAVE_AXES),
   ...COMPARISON_AXES,
+  ...HIERARCHY_AXES,
 ];
 
 /** Largest number of profiles that are drawn for a run. */

@@ -5,6 +5,12 @@
  */
 export { auditClaims, auditModel } from "./audit.ts";
 export { boundedText } from "./bounded_text.ts";
+export {
+  type HierarchyOptions,
+  type HierarchyRow,
+  RedshiftHierarchy,
+  redshiftHierarchy,
+} from "./hierarchy.ts";
 export { LedgerView } from "./ledger_view.ts";
 export { mathMl } from "./math.ts";
 export { compareRuns, type RunComparison } from "./compare_runs.ts";

@@ -35,13 +35,14 @@ export function inward<T>(walker: Walker<T>, u: number): SphereEnd<T> | undefine
   const A = walker.arithmetic, one = A.from(1), start = A.from(u), y = A.exp(start);
   // Schwarzschild: p = sqrt(1 + y^2) - y, R = 2/(1 - p^2) = 1/(y p), psi = ln p
   const lnp = A.neg(A.log(A.add(y, A.sqrt(A.add(one, A.mul(y, y))))));
-  const close = 8 * A.epsilon * Math.max(1, Math.abs(u));
   walker.place(start, [A.neg(A.add(start, lnp)), lnp]);
   for (let i = 0; i < SETTINGS.steps; i++) {
     const step = walker.expand(["gap"]), gap = A.toNumber(walker.outputs()["gap"]!);
     if (!(step > 0)) return undefined;
-    const [L, psi] = walker.state() as [T, T];
-    if (Math.abs(gap) < close) return { L, psi, u: walker.time() };
+    const [L, psi] = walker.state() as [T, T], now = walker.time();
+    // gap = 2 L - 4 u - lng is known to the rounding of its terms, the largest of which is 4 u or lng
+    const size = 2 * Math.abs(A.toNumber(L)) + 8 * Math.abs(A.toNumber(now)) + 1;
+    if (Math.abs(gap) <= 16 * A.epsilon * size) return { L, psi, u: now };
     const newton = -gap / walker.slope("gap");
     walker.advance(Math.abs(newton) < step ? newton : Math.sign(newton) * step);
   }
