@@ -73,13 +73,17 @@ function tensorProgram(): ReturnType<typeof lower> {
   }, { tt: rename(tt), zz: rename(zz), th: rename(th) });
 }
 
+function constantsOf<T>(A: Arithmetic<T>, { c, a, beta }: AnomalyCoefficients): Record<string, T> {
+  const ratio = ({ p, q }: { p: bigint; q: bigint }) => A.ratio(p, q);
+  return { c: ratio(c), ae: ratio(a), beta: ratio(beta), pi: A.pi };
+}
+
 function values<T>(
   A: Arithmetic<T>,
   at: Derivatives<T>,
-  { c, a, beta }: AnomalyCoefficients,
+  coefficients: AnomalyCoefficients,
 ): Record<string, T> {
-  const ratio = ({ p, q }: { p: bigint; q: bigint }) => A.ratio(p, q);
-  const out: Record<string, T> = { c: ratio(c), ae: ratio(a), beta: ratio(beta), pi: A.pi };
+  const out = constantsOf(A, coefficients);
   for (const name of OPTICAL) at[name].forEach((d, k) => out[`${name}${k}`] = d);
   return out;
 }
@@ -91,9 +95,11 @@ export function quickTensor(
   const program = tensorProgram(), evaluate = emitEvaluateDouble(program);
   const none = new Float64Array(0), list = new Float64Array(program.parameters.length);
   const out = new Float64Array(3);
+  const constant = constantsOf(double, coefficients);
+  program.parameters.forEach((name, i) => list[i] = constant[name] ?? 0);
+  const first = OPTICAL.map((name) => program.parameters.indexOf(`${name}0`));
   return (at) => {
-    const known = values(double, at, coefficients);
-    program.parameters.forEach((name, i) => list[i] = known[name]!);
+    OPTICAL.forEach((name, j) => list.set(at[name], first[j]!)); // the five orders stand together
     evaluate(none, 0, list, out);
     return { energy: -out[0]!, radial: out[1]!, tangential: out[2]! };
   };
