@@ -3,7 +3,7 @@
  *
  * @module
  */
-import type { Progress } from "../batch/run.ts";
+import type { Counts } from "../batch/progress.ts";
 
 const WIDTH = 30; // characters of the bar
 const REDRAW_MS = 100; // between redraws of the bar
@@ -34,7 +34,7 @@ function standardError(): ProgressOutput {
  * @param output Where to write. @default standard error
  * @returns A function to be called with each progress.
  */
-export function progressDisplay(output: ProgressOutput = standardError()): (p: Progress) => void {
+export function progressDisplay(output: ProgressOutput = standardError()): (p: Counts) => void {
   let last = -Infinity, step = 0;
   return ({ done, total }) => {
     if (total === 0) return;

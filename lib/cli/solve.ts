@@ -6,7 +6,8 @@
  */
 import { FILES, hasFigures } from "../batch/folder.ts";
 import { type RunOutcome, runTable } from "../batch/run.ts";
-import { summarize, summaryLines } from "../batch/summary.ts";
+import { summaryLines } from "../batch/summary.ts";
+import { watchParent } from "./orphan.ts";
 import { progressDisplay } from "./progress.ts";
 import type { RunRequest } from "./run_options.ts";
 import { UsageError } from "./options.ts";
@@ -25,6 +26,7 @@ function interruption(): AbortSignal {
   for (const signal of ["SIGINT", "SIGTERM"] as const) {
     Deno.addSignalListener(signal, () => controller.abort());
   }
+  watchParent(() => controller.abort());
   return controller.signal;
 }
 
@@ -44,13 +46,29 @@ async function figures(folder: string, { status }: RunOutcome): Promise<void> {
   console.log(`Figures: ${written.length} in ${folder}/${FILES.figures}`);
 }
 
-function statusOf({ status, rows }: RunOutcome): number {
+function statusOf({ status, summary }: RunOutcome): number {
   if (status === "interrupted") return STATUS.interrupted;
-  return rows.some((cells) => cells["outcome"] === "failed") ? STATUS.failed : STATUS.done;
+  return summary?.outcomes.has("failed") ? STATUS.failed : STATUS.done;
+}
+
+function report(outcome: RunOutcome, out: string): void {
+  const { status, summary, unfinished, total, finished } = outcome;
+  if (status === "nothing-to-do") console.log(`Nothing to do: ${out} holds this run whole`);
+  if (summary) { for (const line of summaryLines(summary)) console.log(line); }
+  for (const row of unfinished) console.error(`interrupted: ${row.case}: ${row.error}`);
+  if (status === "interrupted") {
+    console.error(
+      `Interrupted: ${
+        total - finished
+      } of ${total} rows are missing; finished ones are kept, run again`,
+    );
+  }
+  if (summary) console.log(`Results: ${out}/${FILES.results}`);
 }
 
 async function main(request: RunRequest): Promise<number> {
   const { table, out, workers, replace, command } = request;
+  const signal = interruption();
   const bytes = await read(table, "the table");
   const outcome = await runTable({
     table: bytes,
@@ -58,18 +76,12 @@ async function main(request: RunRequest): Promise<number> {
     workers,
     replace,
     command,
-    signal: interruption(),
+    signal,
     onProgress: progressDisplay(),
+    onNotice: (text) => console.error(text),
     ...await profilesOf(request),
   });
-  if (outcome.status === "nothing-to-do") console.log(`Nothing to do: ${out} holds this run whole`);
-  for (const line of summaryLines(summarize(outcome.rows))) console.log(line);
-  for (const row of outcome.unfinished) console.error(`Not finished: ${row.case}: ${row.error}`);
-  if (outcome.status === "interrupted") {
-    const missing = outcome.total - outcome.rows.length;
-    console.error(`Interrupted: ${missing} of ${outcome.total} rows are missing; run again`);
-  }
-  console.log(`Results: ${out}/${FILES.results}`);
+  report(outcome, out);
   await figures(out, outcome);
   return statusOf(outcome);
 }
