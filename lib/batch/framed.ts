@@ -48,10 +48,10 @@ export function stampOfLine(line: Uint8Array): string | undefined {
   if (line.length < HEAD + STAMP + 1) return undefined;
   const head = decoder.decode(line.subarray(0, HEAD + STAMP));
   const body = line.subarray(HEAD);
+  if (!/^[0-9a-f]{8} [0-9a-f]{16} [0-9a-f]{64}$/.test(head)) return undefined;
   if (parseInt(head.slice(0, LENGTH), 16) !== body.length) return undefined;
   if (sha256(body).slice(0, CHECK) !== head.slice(LENGTH + 1, HEAD - 1)) return undefined;
-  const stamp = head.slice(HEAD);
-  return /^[0-9a-f]{64}$/.test(stamp) ? stamp : undefined;
+  return head.slice(HEAD);
 }
 
 /**
