@@ -14,6 +14,7 @@ import { resultCells } from "./result_row.ts";
 import type { Done, NamedModel, Task } from "./serve.ts";
 import { sha256 } from "./stamp.ts";
 import { onDisk } from "./storage.ts";
+import type { Store } from "./store.ts";
 import { writeWhole } from "./whole_file.ts";
 
 /** Longest time that a finished row is not durable, but for that of one flush (milliseconds). */
@@ -34,7 +35,7 @@ class Profiles {
 
   write(name: string, text: string): void {
     const path = `${this.folder}/${profilePath(name)}`;
-    writeWhole(path, text, false);
+    writeWhole(path, text, { durable: false });
     this.#fresh.push(path);
   }
 
@@ -72,6 +73,7 @@ function tasksOf(plan: Plan, { places }: Held): { tasks: Task[]; same: Map<strin
  * @param plan The run.
  * @param held Its finished rows; more are added.
  * @param options Workers, folder, signal.
+ * @param store Gets each row that is finished.
  * @returns Rows that could not be finished, in table order.
  * @throws {StorageError} if the disk refuses; what was flushed is kept.
  */
@@ -79,6 +81,7 @@ export async function solveMissing(
   plan: Plan,
   held: Held,
   options: MissingOptions,
+  store?: Store,
 ): Promise<Unfinished[]> {
   const { tasks, same } = tasksOf(plan, held);
   const counter = new ProgressCounter(plan.rows.length, [...same.values()].flat().length);
@@ -115,6 +118,7 @@ export async function solveMissing(
     }
     if (profile !== undefined) { for (const name of asked) profiles.write(name, profile); }
     held.places.set(stamp, held.journal.append({ stamp, text }));
+    store?.add({ stamp, text }, profile);
     counter.add(rows.length, result);
     return undefined;
   };

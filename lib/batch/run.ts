@@ -13,8 +13,10 @@ import { type Plan, planRun } from "./plan.ts";
 import type { Counts } from "./progress.ts";
 import type { RunPart, Unfinished } from "./record.ts";
 import type { RecordHead } from "./record_file.ts";
+import { share } from "./reuse.ts";
 import { sha256 } from "./stamp.ts";
 import { onDisk } from "./storage.ts";
+import { Store } from "./store.ts";
 import type { Summary } from "./summary.ts";
 import { writeWhole } from "./whole_file.ts";
 
@@ -30,6 +32,8 @@ export interface RunOptions {
   readonly rowLimit?: number;
   /** Memory of one worker (MiB). @default 1024 */
   readonly memoryLimit?: number;
+  /** Folder of finished rows shared with other runs. */
+  readonly store?: string;
   /** Rows that get a profile. @default all of up to 200 rows, else none */
   readonly profiles?: "all" | "none" | { readonly lines: string };
   /** Whether files of another run in the folder may be removed. @default false */
@@ -125,14 +129,18 @@ async function complete(
   previous: RecordHead | undefined,
   options: RunOptions,
 ): Promise<RunOutcome> {
-  const { folder, signal } = options, total = plan.rows.length, kept = finishedOf(plan, held);
+  const { folder, signal } = options, total = plan.rows.length, before = finishedOf(plan, held);
   if (held.journal.damaged > 0) {
     options.onNotice?.(`Solved again: ${held.journal.damaged} damaged in ${FILES.journal}`);
   }
+  const store = options.store === undefined
+    ? undefined
+    : new Store(options.store, (text) => options.onNotice?.(text));
   if (
-    previous?.status === "done" && kept === total && companionsHeld(folder) &&
+    previous?.status === "done" && before === total && companionsHeld(folder) &&
     resultsHeld(folder, previous)
   ) {
+    if (store) await share(plan, held, store, options);
     const summary = await sumUp(plan, held);
     return { status: "nothing-to-do", total, finished: total, summary, unfinished: [] };
   }
@@ -148,7 +156,12 @@ async function complete(
   });
   await writeRecord(head({}, part), folder);
   writeWhole(`${folder}/${FILES.table}`, plan.table);
-  const unfinished = await solveMissing(plan, held, options);
+  if (store) {
+    const taken = await share(plan, held, store, options);
+    if (taken > 0) options.onNotice?.(`Taken from the store: ${taken} of ${total} rows`);
+  }
+  const kept = finishedOf(plan, held);
+  const unfinished = await solveMissing(plan, held, options, store);
   const finished = finishedOf(plan, held);
   const ended = () => ({ ...part, ended: new Date().toISOString(), rows: finished - kept });
   const tables = signal?.aborted ? undefined : await writeTables(plan, held, folder, signal);

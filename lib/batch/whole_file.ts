@@ -33,6 +33,7 @@ export function writeFully(file: Deno.FsFile, bytes: Uint8Array): void {
 /** A file in the making. */
 export class WholeFile {
   readonly #path: string;
+  readonly #unfinished: string;
   readonly #file: Deno.FsFile;
   readonly #hash = createHash("sha256");
   readonly #encoder = new TextEncoder();
@@ -43,13 +44,15 @@ export class WholeFile {
    * Begins a file; what was left unfinished under its name is dropped.
    *
    * @param path Its name once it is whole.
+   * @param ending What is added to its name until then. @default .tmp
    * @throws {StorageError} if the disk refuses, here and in all methods.
    */
-  constructor(path: string) {
+  constructor(path: string, ending: string = UNFINISHED) {
     this.#path = path;
+    this.#unfinished = path + ending;
     this.#file = onDisk(`write ${path}`, () => {
-      removeIfPresent(path + UNFINISHED);
-      return Deno.openSync(path + UNFINISHED, { write: true, createNew: true }); // follows no link
+      removeIfPresent(this.#unfinished);
+      return Deno.openSync(this.#unfinished, { write: true, createNew: true }); // follows no link
     });
   }
 
@@ -95,7 +98,7 @@ export class WholeFile {
       onDisk(`write ${this.#path}`, () => {
         if (durable) this.#file.syncSync();
         this.#file.close();
-        Deno.renameSync(this.#path + UNFINISHED, this.#path);
+        Deno.renameSync(this.#unfinished, this.#path);
       });
     } catch (error) {
       this.discard();
@@ -110,7 +113,7 @@ export class WholeFile {
       this.#file.close();
     } catch { /* closed already */ }
     try {
-      removeIfPresent(this.#path + UNFINISHED);
+      removeIfPresent(this.#unfinished);
     } catch { /* the first error is told */ }
   }
 }
@@ -120,11 +123,16 @@ export class WholeFile {
  *
  * @param path File.
  * @param data Text or bytes.
- * @param durable Whether it must outlast a power failure from now on.
+ * @param options `durable`: whether it must outlast a power failure from now on; `ending` of its name until
+ * it is whole.
  * @throws {StorageError} if the disk refuses; the old file stays.
  */
-export function writeWhole(path: string, data: string | Uint8Array, durable = true): void {
-  const file = new WholeFile(path);
+export function writeWhole(
+  path: string,
+  data: string | Uint8Array,
+  options: { readonly durable?: boolean; readonly ending?: string } = {},
+): void {
+  const file = new WholeFile(path, options.ending);
   file.writeBytes(typeof data === "string" ? new TextEncoder().encode(data) : data);
-  file.commit(durable);
+  file.commit(options.durable);
 }
