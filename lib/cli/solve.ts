@@ -5,10 +5,12 @@
  * @module
  */
 import { FILES, hasFigures } from "../batch/folder.ts";
+import type { Counts } from "../batch/progress.ts";
 import { type RunOutcome, runTable } from "../batch/run.ts";
 import { summaryLines } from "../batch/summary.ts";
 import { watchParent } from "./orphan.ts";
 import { progressDisplay } from "./progress.ts";
+import { progressLines, STANDARD_ERROR } from "./progress_lines.ts";
 import type { RunRequest } from "./run_options.ts";
 import { UsageError } from "./options.ts";
 import { closing, STATUS } from "./status.ts";
@@ -39,11 +41,15 @@ async function profilesOf(
   return { profiles: { lines: new TextDecoder().decode(bytes) } };
 }
 
-async function figures(folder: string, { status }: RunOutcome): Promise<void> {
+async function figures(
+  folder: string,
+  { status }: RunOutcome,
+  quiet: boolean,
+): Promise<void> {
   if (status === "interrupted" || (status === "nothing-to-do" && hasFigures(folder))) return;
   const { writeFigures } = await import("../show/figures.ts");
   const written = await writeFigures(folder);
-  console.log(`Figures: ${written.length} in ${folder}/${FILES.figures}`);
+  if (!quiet) console.log(`Figures: ${written.length} in ${folder}/${FILES.figures}`);
 }
 
 function statusOf({ status, summary }: RunOutcome): number {
@@ -51,38 +57,54 @@ function statusOf({ status, summary }: RunOutcome): number {
   return summary?.outcomes.has("failed") ? STATUS.failed : STATUS.done;
 }
 
-function report(outcome: RunOutcome, out: string): void {
+function report(outcome: RunOutcome, out: string, quiet: boolean): void {
   const { status, summary, unfinished, total, finished } = outcome;
-  if (status === "nothing-to-do") console.log(`Nothing to do: ${out} holds this run whole`);
-  if (summary) { for (const line of summaryLines(summary)) console.log(line); }
+  const say = quiet ? () => {} : (line: string) => console.log(line);
+  if (status === "nothing-to-do") say(`Nothing to do: ${out} holds this run whole`);
+  if (summary) { for (const line of summaryLines(summary)) say(line); }
   for (const row of unfinished) console.error(`interrupted: ${row.case}: ${row.error}`);
   if (status === "interrupted") {
-    console.error(
-      `Interrupted: ${
-        total - finished
-      } of ${total} rows are missing; finished ones are kept, run again`,
-    );
+    const missing = `${total - finished} of ${total} rows are missing`;
+    console.error(`Interrupted: ${missing}; finished ones are kept, run again`);
   }
-  if (summary) console.log(`Results: ${out}/${FILES.results}`);
+  if (summary) say(`Results: ${out}/${FILES.results}`);
+}
+
+/** Progress as it was asked for. */
+function progressOf(
+  { quiet, progressLines: to }: RunRequest,
+): { onProgress: (counts: Counts) => void; end: (status: string) => void } {
+  const display = quiet || to === STANDARD_ERROR ? undefined : progressDisplay();
+  const lines = to === undefined ? undefined : progressLines(to);
+  return {
+    onProgress: (counts) => {
+      display?.(counts);
+      lines?.rows(counts);
+    },
+    end: (status) => lines?.end(status),
+  };
 }
 
 async function main(request: RunRequest): Promise<number> {
-  const { table, out, workers, replace, command } = request;
-  const signal = interruption();
-  const bytes = await read(table, "the table");
+  const { table, out, quiet } = request, signal = interruption();
+  const bytes = await read(table, "the table"), { onProgress, end } = progressOf(request);
+  const { workers, rowLimit, store, replace, command } = request;
   const outcome = await runTable({
     table: bytes,
     folder: out,
     workers,
+    rowLimit,
+    ...(store === undefined ? {} : { store }),
     replace,
     command,
     signal,
-    onProgress: progressDisplay(),
+    onProgress,
     onNotice: (text) => console.error(text),
     ...await profilesOf(request),
   });
-  report(outcome, out);
-  await figures(out, outcome);
+  end(outcome.status);
+  report(outcome, out, quiet);
+  await figures(out, outcome, quiet);
   return statusOf(outcome);
 }
 
