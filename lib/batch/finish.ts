@@ -7,14 +7,15 @@ import { readAnswer, rowRecord } from "./answer.ts";
 import { FILES } from "./folder.ts";
 import { type Held, profileHeld } from "./kept.ts";
 import { profilesMetadata, resultsMetadata } from "./metadata.ts";
+import { pauses } from "./pause.ts";
 import type { Plan } from "./plan.ts";
 import { RecordFile, type RecordHead } from "./record_file.ts";
-import { type ResultCells, resultCells } from "./result_row.ts";
+import { resultCells } from "./result_row.ts";
 import { RESULTS_HEADER, resultsLines } from "./results_file.ts";
 import { GrowingSummary, type Summary } from "./summary.ts";
 import { WholeFile, writeWhole } from "./whole_file.ts";
 
-/** Rows between two looks at whether to stop. */
+/** Rows that are read together. */
 const PIECE = 500;
 
 /** What the tables came to. */
@@ -33,6 +34,7 @@ async function* pieces(
   { journal, places }: Held,
   signal?: AbortSignal,
 ): AsyncGenerator<readonly { readonly index: number; readonly text: string }[]> {
+  const pause = pauses();
   for (let from = 0; from < plan.rows.length; from += PIECE) {
     const piece: { index: number; text: string }[] = [];
     for (let index = from; index < Math.min(from + PIECE, plan.rows.length); index++) {
@@ -40,28 +42,9 @@ async function* pieces(
       if (place) piece.push({ index, text: journal.read(place) });
     }
     yield piece;
-    await new Promise((resolve) => setTimeout(resolve)); // signals are heard between pieces
+    await pause();
     if (signal?.aborted) return;
   }
-}
-
-/**
- * Sums the finished rows up without writing anything.
- *
- * @param plan The run.
- * @param held Its finished rows.
- * @returns Counts and extremes.
- */
-export async function sumUp(plan: Plan, held: Held): Promise<Summary> {
-  const summary = new GrowingSummary();
-  for await (const piece of pieces(plan, held)) {
-    for (const { index, text } of piece) summary.add(cellsOf(plan, index, text));
-  }
-  return summary;
-}
-
-function cellsOf(plan: Plan, index: number, text: string): ResultCells {
-  return resultCells(plan.rows[index]!, readAnswer(text).result, plan.stamps[index]!);
 }
 
 /**

@@ -7,6 +7,7 @@ import type { Bounded } from "../observe/result.ts";
 import type { CoreIdentity } from "./core.ts";
 import type { Host } from "./host.ts";
 import { canonicalJson } from "./stamp.ts";
+import type { SummaryJson } from "./summary.ts";
 
 /** What a run computes, told apart from any other run. */
 export interface RunIdentity extends CoreIdentity {
@@ -76,6 +77,8 @@ export interface RunRecord {
   readonly total: number;
   /** SHA-256 and rows of results.csv, once it is written. */
   readonly results?: { readonly sha256: string; readonly rows: number };
+  /** Counts and extremes of results.csv, once it is written. */
+  readonly summary?: SummaryJson;
   /** Rows that a fault of the program, a crash or a limit ended. */
   readonly unfinished: readonly Unfinished[];
   /** Finished rows by case. */

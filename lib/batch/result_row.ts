@@ -60,6 +60,11 @@ function numbersOf(row: TableRow, result: RowResult): Partial<Record<NumericColu
   return numbers;
 }
 
+/** A row with all columns and nothing in them. */
+const EMPTY: ResultCells = Object.fromEntries(RESULT_COLUMNS.map(({ name }) => [name, ""]));
+/** Numeric columns with their columns of bounds. */
+const PAIRS = NUMERIC_COLUMNS.map((name) => [name, `${name}_err`] as const);
+
 /**
  * Cells of one results row.
  *
@@ -77,8 +82,7 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
   }
   if (!solved && result.reason === "") fail(row, "a reason must be given", result.outcome);
   const numbers = numbersOf(row, result);
-  const cells: Record<string, string> = {};
-  for (const { name } of RESULT_COLUMNS) cells[name] = "";
+  const cells: Record<string, string> = { ...EMPTY };
   const write = (name: string, value: number | undefined) => {
     if (value !== undefined) cells[name] = writeNumber(value);
   };
@@ -98,12 +102,12 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
   write("a", input.a);
   write("wall_radius", input.wallRadius);
   write("tolerance", input.tolerance);
-  for (const name of NUMERIC_COLUMNS) {
+  for (const [name, bound] of PAIRS) {
     const number = numbers[name];
     if (number === undefined) continue;
     check(row, name, number);
     write(name, number.value);
-    write(`${name}_err`, number.error);
+    write(bound, number.error);
   }
   checkUnderflow(row, numbers);
   return cells;

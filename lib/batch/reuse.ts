@@ -6,13 +6,11 @@
 import { readAnswer } from "./answer.ts";
 import { profilePath, readIfPresent } from "./folder.ts";
 import { type Held, profileHeld } from "./kept.ts";
+import { pauses } from "./pause.ts";
 import type { Plan } from "./plan.ts";
 import { resultCells } from "./result_row.ts";
 import type { Entry, Store } from "./store.ts";
 import { writeWhole } from "./whole_file.ts";
-
-/** Rows between two looks at whether to stop. */
-const PIECE = 500;
 
 /** Rows of the table by stamp. */
 function byStamp(plan: Plan): Map<string, number[]> {
@@ -64,9 +62,10 @@ export async function share(
   options: { readonly folder: string; readonly signal?: AbortSignal },
 ): Promise<number> {
   const { folder, signal } = options;
-  let taken = 0, seen = 0;
+  const pause = pauses();
+  let taken = 0;
   for (const [stamp, rows] of byStamp(plan)) {
-    if (seen++ % PIECE === 0) await new Promise((resolve) => setTimeout(resolve));
+    await pause();
     if (signal?.aborted) break;
     if (held.places.has(stamp)) {
       give(plan, rows, held, store, folder);

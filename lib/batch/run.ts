@@ -4,7 +4,7 @@
  * @module
  */
 import { companionsHeld, type Held, heldRows } from "./kept.ts";
-import { sumUp, writeRecord, writeTables } from "./finish.ts";
+import { writeRecord, writeTables } from "./finish.ts";
 import { FILES, inspectFolder, openFolder, readIfPresent } from "./folder.ts";
 import { gitCommit, hostFacts } from "./host.ts";
 import { Lock } from "./lock.ts";
@@ -17,7 +17,7 @@ import { share } from "./reuse.ts";
 import { sha256 } from "./stamp.ts";
 import { onDisk } from "./storage.ts";
 import { Store } from "./store.ts";
-import type { Summary } from "./summary.ts";
+import { type Summary, summaryJson, summaryOf } from "./summary.ts";
 import { writeWhole } from "./whole_file.ts";
 
 /** What is run, and how. */
@@ -137,11 +137,11 @@ async function complete(
     ? undefined
     : new Store(options.store, (text) => options.onNotice?.(text));
   if (
-    previous?.status === "done" && before === total && companionsHeld(folder) &&
-    resultsHeld(folder, previous)
+    previous?.status === "done" && previous.summary && before === total &&
+    companionsHeld(folder) && resultsHeld(folder, previous)
   ) {
     if (store) await share(plan, held, store, options);
-    const summary = await sumUp(plan, held);
+    const summary = summaryOf(previous.summary);
     return { status: "nothing-to-do", total, finished: total, summary, unfinished: [] };
   }
   const part = await beginPart(options);
@@ -172,6 +172,10 @@ async function complete(
   const status = finished === total ? "done" : "interrupted";
   const { results, summary, profiled } = tables;
   const rows = { plan, held, profiled };
-  await writeRecord(head({ status, results, unfinished }, ended()), folder, rows);
+  await writeRecord(
+    head({ status, results, summary: summaryJson(summary), unfinished }, ended()),
+    folder,
+    rows,
+  );
   return { status, total, finished, summary, unfinished };
 }

@@ -29,6 +29,25 @@ export interface Summary {
   readonly worst?: WorstBound;
 }
 
+/** A summary as JSON. */
+export interface SummaryJson extends Omit<Summary, "outcomes" | "kinds"> {
+  /** Rows by outcome. */
+  readonly outcomes: Readonly<Record<string, number>>;
+  /** Solved rows by kind. */
+  readonly kinds: Readonly<Record<string, number>>;
+}
+
+/** A summary for run.json. */
+export function summaryJson({ outcomes, kinds, ...rest }: Summary): SummaryJson {
+  return { outcomes: Object.fromEntries(outcomes), kinds: Object.fromEntries(kinds), ...rest };
+}
+
+/** A summary of run.json. */
+export function summaryOf({ outcomes, kinds, ...rest }: SummaryJson): Summary {
+  const map = (counts: Readonly<Record<string, number>>) => new Map(Object.entries(counts));
+  return { outcomes: map(outcomes), kinds: map(kinds), ...rest };
+}
+
 /** Reasons that are told one by one; the others stand in results.csv. */
 export const MOST_REASONS = 50;
 

@@ -41,11 +41,18 @@ async function profilesOf(
   return { profiles: { lines: new TextDecoder().decode(bytes) } };
 }
 
+/** Rows up to which figures are drawn: their time grows with the square. */
+const MOST_DRAWN = 5000;
+
 async function figures(
   folder: string,
-  { status }: RunOutcome,
+  { status, total }: RunOutcome,
   quiet: boolean,
 ): Promise<void> {
+  if (total > MOST_DRAWN) {
+    if (!quiet) console.log(`Figures: none, a map of more than ${MOST_DRAWN} rows shows nothing`);
+    return;
+  }
   if (status === "interrupted" || (status === "nothing-to-do" && hasFigures(folder))) return;
   const { writeFigures } = await import("../show/figures.ts");
   const written = await writeFigures(folder);
