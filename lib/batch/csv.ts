@@ -42,9 +42,14 @@ function decode(bytes: Uint8Array): string | Fault {
   }
 }
 
+/** Bytes of a record at most: an unclosed quotation mark makes one of the whole file. */
+const LONGEST_RECORD = 1 << 16;
+
 const QUOTE_FAULTS: Readonly<Record<string, string>> = {
   INVALID_OPENING_QUOTE: "a quotation mark must begin a field and be doubled inside it",
   CSV_INVALID_CLOSING_QUOTE: "a closing quotation mark must end its field",
+  CSV_MAX_RECORD_SIZE:
+    `a record must have at most ${LONGEST_RECORD} bytes: a quotation mark may not be closed`,
   CSV_QUOTE_NOT_CLOSED: "a quoted field must be closed before the end of the file",
 };
 
@@ -77,6 +82,7 @@ function eachQuotedRecord(text: string, onRecord: (record: CsvRecord) => void): 
     relax_column_count: true,
     skip_empty_lines: true,
     skip_records_with_error: true,
+    max_record_size: LONGEST_RECORD,
     on_record: (fields: string[], { lines }: { lines: number }) => {
       const inner = fields.reduce((n, field) => n + field.split("\n").length - 1, 0);
       onRecord({ fields, line: lines - inner });

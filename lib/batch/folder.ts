@@ -3,6 +3,7 @@
  *
  * @module
  */
+import { caseFault } from "./case_name.ts";
 import { differences, type RunIdentity } from "./record.ts";
 import { readRecordHead, type RecordHead } from "./record_file.ts";
 import { onDisk } from "./storage.ts";
@@ -35,8 +36,11 @@ export class FolderError extends Error {
  *
  * @param name A valid case.
  * @returns Path relative to the folder.
+ * @throws {Error} if the case is not valid: its file could lie elsewhere.
  */
 export function profilePath(name: string): string {
+  const must = caseFault(name);
+  if (must) throw new Error(`Cannot name a profile as its case ${must}: current value is ${name}`);
   return `${FILES.profiles}/${name}.csv`;
 }
 

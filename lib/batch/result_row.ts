@@ -60,6 +60,14 @@ function numbersOf(row: TableRow, result: RowResult): Partial<Record<NumericColu
   return numbers;
 }
 
+/**
+ * Text columns with what they match. Each begins with a letter or a digit, so that no spreadsheet takes a
+ * text of the table for a formula, and nothing need be added to texts that would have to be taken off again.
+ */
+const TEXTS = RESULT_COLUMNS.flatMap(({ name, datatype }) =>
+  datatype === "double" || name === "stamp" ? [] : [[name, new RegExp(`^(${datatype.format})$`)]]
+) as readonly (readonly [string, RegExp])[];
+
 /** A row with all columns and nothing in them. */
 const EMPTY: ResultCells = Object.fromEntries(RESULT_COLUMNS.map(({ name }) => [name, ""]));
 /** Numeric columns with their columns of bounds. */
@@ -72,7 +80,7 @@ const PAIRS = NUMERIC_COLUMNS.map((name) => [name, `${name}_err`] as const);
  * @param result What the solver returned for it.
  * @param stamp Its stamp.
  * @returns Text by column name, empty where not applicable.
- * @throws {Error} if the result has a NaN, a missing or negative bound, or a kind without being solved.
+ * @throws {Error} if the result has a text that its column does not allow, a NaN, a missing or negative bound, or a kind without being solved.
  */
 export function resultCells(row: TableRow, result: RowResult, stamp: string): ResultCells {
   const { input } = row;
@@ -110,5 +118,10 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
     write(bound, number.error);
   }
   checkUnderflow(row, numbers);
+  for (const [name, format] of TEXTS) {
+    const text = cells[name]!;
+    if (text === "" || format.test(text)) continue;
+    fail(row, `${name} must match ${format.source}`, JSON.stringify(text));
+  }
   return cells;
 }

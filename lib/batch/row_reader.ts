@@ -19,6 +19,7 @@ import {
   PARAMETER_COLUMNS,
   type ParameterColumn,
 } from "./columns.ts";
+import { caseFault } from "./case_name.ts";
 import { type Fault, quoted } from "./fault.ts";
 import { nearest } from "./nearest.ts";
 import { readNumber } from "./number.ts";
@@ -47,17 +48,10 @@ export interface Cells {
 
 type Report = (column: string, text: string) => void;
 
-const CASE = /^[A-Za-z0-9][A-Za-z0-9._-]{0,63}$/;
-
 function readCase(text: string, report: Report): string {
+  const must = caseFault(text);
   if (text === "") report("case", "must be given: it names the row and its profile");
-  else if (!CASE.test(text)) {
-    report(
-      "case",
-      "must be at most 64 ASCII letters, digits, dots, underscores or hyphens and start with a " +
-        `letter or digit: current value is ${quoted(text)}`,
-    );
-  }
+  else if (must) report("case", `${must}: current value is ${quoted(text)}`);
   return text;
 }
 

@@ -15,6 +15,10 @@ const NEEDED_BY_ALL = EXCLUSIVE.filter((group) => group[0] === "kappa" || group[
 
 function headerFaults({ fields, line }: CsvRecord): Fault[] {
   const faults: Fault[] = [];
+  if (fields.length > 2 * TABLE_COLUMNS.length) {
+    const most = `must have at most ${TABLE_COLUMNS.length} columns`;
+    return [{ line, text: `${most}: current count is ${fields.length}` }];
+  }
   const seen = new Set<string>();
   for (const [index, name] of fields.entries()) {
     if (name === "") {
@@ -57,8 +61,11 @@ export function readTable(bytes: Uint8Array): readonly TableRow[] {
       header = record;
       faults.push(...headerFaults(record));
       readRecord = recordReader(record, faults, rows);
-    } else if (faults.length < MOST_FAULTS) readRecord(record);
-    records++;
+    } else if (faults.length < MOST_FAULTS && records <= MOST_ROWS) readRecord(record);
+    if (++records === MOST_ROWS + 2) {
+      const text = `must be at most ${MOST_ROWS} rows, of which more are better split`;
+      faults.push({ line: record.line, text: `${text}: there is one more` });
+    }
   });
   faults.push(...textFaults);
   if (textFaults.length === 0 && records === 0) {
@@ -71,6 +78,8 @@ export function readTable(bytes: Uint8Array): readonly TableRow[] {
   return rows;
 }
 
+/** Rows a table may have. */
+const MOST_ROWS = 1_000_000;
 /** Faults that are told; whoever has more of them has one kind of fault many times. */
 const MOST_FAULTS = 1000;
 

@@ -4,9 +4,11 @@
  *
  * @module
  */
+import { TableError } from "../batch/fault.ts";
 import { FILES, hasFigures } from "../batch/folder.ts";
 import type { Counts } from "../batch/progress.ts";
 import { type RunOutcome, runTable } from "../batch/run.ts";
+import { readTableFile } from "../batch/table_file.ts";
 import { summaryLines } from "../batch/summary.ts";
 import { watchParent } from "./orphan.ts";
 import { progressDisplay } from "./progress.ts";
@@ -15,10 +17,11 @@ import type { RunRequest } from "./run_options.ts";
 import { UsageError } from "./options.ts";
 import { closing, STATUS } from "./status.ts";
 
-async function read(path: string, what: string): Promise<Uint8Array> {
+function read(path: string, what: string): Uint8Array {
   try {
-    return await Deno.readFile(path);
+    return readTableFile(path, what);
   } catch (error) {
+    if (error instanceof TableError) throw error;
     throw new UsageError([`Cannot read ${what} ${path}: ${(error as Error).message}`]);
   }
 }
@@ -32,12 +35,12 @@ function interruption(): AbortSignal {
   return controller.signal;
 }
 
-async function profilesOf(
+function profilesOf(
   { profiles }: RunRequest,
-): Promise<{ profiles?: "all" | "none" | { lines: string } }> {
+): { profiles?: "all" | "none" | { lines: string } } {
   if (profiles === undefined) return {};
   if (typeof profiles === "string") return { profiles };
-  const bytes = await read(profiles.file, "the list of profiles");
+  const bytes = read(profiles.file, "the list of profiles");
   return { profiles: { lines: new TextDecoder().decode(bytes) } };
 }
 
@@ -94,7 +97,7 @@ function progressOf(
 
 async function main(request: RunRequest): Promise<number> {
   const { table, out, quiet } = request, signal = interruption();
-  const bytes = await read(table, "the table"), { onProgress, end } = progressOf(request);
+  const bytes = read(table, "the table"), { onProgress, end } = progressOf(request);
   const { workers, rowLimit, store, replace, command } = request;
   const outcome = await runTable({
     table: bytes,
@@ -107,7 +110,7 @@ async function main(request: RunRequest): Promise<number> {
     signal,
     onProgress,
     onNotice: (text) => console.error(text),
-    ...await profilesOf(request),
+    ...profilesOf(request),
   });
   end(outcome.status);
   report(outcome, out, quiet);
