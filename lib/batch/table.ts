@@ -67,6 +67,8 @@ export function readTable(bytes: Uint8Array): readonly TableRow[] {
       faults.push({ line: record.line, text: `${text}: there is one more` });
     }
   });
+  // A header that could not be read makes a header of the row below it, and nonsense of the rest.
+  if (textFaults.some(({ line }) => line < (header?.line ?? 0))) throw new TableError(textFaults);
   faults.push(...textFaults);
   if (textFaults.length === 0 && records === 0) {
     faults.push({ line: 1, text: "a header must follow: the file is empty" });
