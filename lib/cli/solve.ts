@@ -111,6 +111,9 @@ async function main(request: RunRequest): Promise<number> {
     onProgress,
     onNotice: (text) => console.error(text),
     ...profilesOf(request),
+  }).catch((error) => {
+    end("error");
+    throw error;
   });
   end(outcome.status);
   report(outcome, out, quiet);
