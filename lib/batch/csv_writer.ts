@@ -3,7 +3,10 @@
  *
  * @module
  */
-import { stringify } from "csv-stringify/sync";
+
+function fieldText(field: string): string {
+  return /[",\r\n]/.test(field) ? `"${field.replaceAll('"', '""')}"` : field;
+}
 
 /**
  * Writes records.
@@ -12,5 +15,5 @@ import { stringify } from "csv-stringify/sync";
  * @returns Lines; a field is quoted only if it must be.
  */
 export function csvLines(records: readonly (readonly string[])[]): string {
-  return stringify(records as string[][], { record_delimiter: "\n" });
+  return records.map((fields) => `${fields.map(fieldText).join(",")}\n`).join("");
 }

@@ -21,12 +21,20 @@ export interface Fault {
  * @returns `line L, column C: what must hold: current value is "..."`.
  */
 export function describeFault({ line, column, text }: Fault): string {
-  return `line ${line}${column === undefined ? "" : `, column ${column}`}: ${text}`;
+  return `line ${line}${column === undefined ? "" : `, column ${printable(column)}`}: ${text}`;
+}
+
+/** Text in which nothing can move the cursor, hide, or turn the direction of writing. */
+function printable(text: string): string {
+  return text.replace(
+    /[\p{Cc}\p{Cf}\p{Zl}\p{Zp}\p{Co}\p{Cs}]/gu,
+    (c) => `\\u${c.codePointAt(0)!.toString(16).padStart(4, "0")}`,
+  );
 }
 
 /** What was found, quoted and cut to a readable length. */
 export function quoted(text: string): string {
-  return JSON.stringify(text.length > 40 ? `${text.slice(0, 37)}...` : text);
+  return printable(JSON.stringify(text.length > 40 ? `${text.slice(0, 37)}...` : text));
 }
 
 /** A table or list that cannot be used; nothing was run. */

@@ -3,53 +3,56 @@
  *
  * @module
  */
+import { readAnswer } from "./answer.ts";
 import { FILES, profilePath, readIfPresent } from "./folder.ts";
+import { Journal, type Place } from "./journal.ts";
 import type { Plan } from "./plan.ts";
-import type { RowRecord, RunRecord } from "./record.ts";
-import type { ResultCells } from "./result_row.ts";
-import { readResults } from "./results_file.ts";
 import { sha256 } from "./stamp.ts";
 
-/** A finished row: its cells and what the record keeps of it. */
-export interface FinishedRow {
-  /** Cells of results.csv. */
-  readonly cells: ResultCells;
-  /** Its part of run.json. */
-  readonly record: RowRecord;
-}
-
-function profileHeld(folder: string, name: string, record: RowRecord): boolean {
-  if (record.profile === null) return true;
-  if (record.profile === undefined) return false;
-  const profile = readIfPresent(`${folder}/${profilePath(name)}`);
-  return profile !== undefined && sha256(profile) === record.profile;
+/** The rows of a run that are finished, by stamp. */
+export interface Held {
+  /** The journal they stand in. */
+  readonly journal: Journal;
+  /** Where; stamps of other runs in the journal have no place here. */
+  readonly places: Map<string, Place>;
 }
 
 /**
- * Finds the rows that need not be solved again: their stamps agree, results.csv is as it was written, and
- * so is the profile where one is wanted.
+ * Whether a case has the profile it should have.
+ *
+ * @param folder Output folder.
+ * @param name Case.
+ * @param profile SHA-256 of the profile; null where the row has none; absent if none was asked for.
+ * @returns True if the file is there and whole, or must not be there.
+ */
+export function profileHeld(folder: string, name: string, profile?: string | null): boolean {
+  if (profile === null) return true;
+  if (profile === undefined) return false;
+  const bytes = readIfPresent(`${folder}/${profilePath(name)}`);
+  return bytes !== undefined && sha256(bytes) === profile;
+}
+
+/**
+ * Finds the rows that need not be solved again: their stamps are in the journal, and the profiles that are
+ * wanted of them are whole.
  *
  * @param plan The run.
  * @param folder Its output folder.
- * @param record The folder's record of this run, if it has one.
- * @returns Finished rows by their place in the table.
+ * @returns Finished rows and the open journal.
  */
-export function keptRows(
-  plan: Plan,
-  folder: string,
-  record: RunRecord | undefined,
-): Map<number, FinishedRow> {
-  const kept = new Map<number, FinishedRow>();
-  const bytes = record && readIfPresent(`${folder}/${FILES.results}`);
-  if (!bytes || sha256(bytes) !== record.results?.sha256) return kept;
-  const results = readResults(bytes);
+export function heldRows(plan: Plan, folder: string): Held {
+  const places = new Map<string, Place>();
+  const journal = Journal.open(`${folder}/${FILES.journal}`, (stamp, place) => {
+    if (plan.firsts.has(stamp)) places.set(stamp, place);
+  });
   for (const [i, { case: name }] of plan.rows.entries()) {
-    const cells = results.get(name), known = record.rows[name], stamp = plan.stamps[i];
-    if (!cells || cells["stamp"] !== stamp || known?.stamp !== stamp) continue;
-    if (plan.profiles.has(name) && !profileHeld(folder, name, known)) continue;
-    kept.set(i, { cells, record: known });
+    if (!plan.profiles.has(name)) continue;
+    const stamp = plan.stamps[i]!, place = places.get(stamp);
+    if (place === undefined) continue;
+    const { profile } = readAnswer(journal.read(place));
+    if (!profileHeld(folder, name, profile)) places.delete(stamp);
   }
-  return kept;
+  return { journal, places };
 }
 
 /**

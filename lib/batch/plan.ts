@@ -22,6 +22,8 @@ export interface Plan {
   readonly rows: readonly TableRow[];
   /** Stamp of each row. */
   readonly stamps: readonly string[];
+  /** First row of each stamp: rows of one stamp are solved once. */
+  readonly firsts: ReadonlyMap<string, number>;
   /** Cases that get a profile. */
   readonly profiles: ReadonlySet<string>;
   /** Compiled models of the rows. */
@@ -58,10 +60,14 @@ export async function planRun(
   const stampOf = new Map(
     [...models].map(([name, m]) => [name, stamper({ ...shared, expressions: m.expressions })]),
   );
+  const stamps = rows.map(({ input }) => stampOf.get(input.model)!(input));
+  const firsts = new Map<string, number>();
+  for (const [i, stamp] of stamps.entries()) if (!firsts.has(stamp)) firsts.set(stamp, i);
   return {
     table,
     rows,
-    stamps: rows.map(({ input }) => stampOf.get(input.model)!(input)),
+    stamps,
+    firsts,
     profiles: chosen,
     models: [...models.values()],
     identity: { table: sha256(table), expressions, ...shared },

@@ -1,102 +1,113 @@
 /**
- * Rows over several workers with dynamic balance: a worker gets new rows as it finishes old ones, in
- * messages small enough to keep all workers busy to the end.
+ * Rows over several workers with dynamic balance: a worker gets new rows as it finishes old ones. A worker
+ * that crashes, hangs or runs out of memory takes no row with it: the one it was at is tried once more in
+ * another worker, the others are given out again.
  *
  * @module
  */
-import type { Done, FromWorker, NamedModel, Task } from "./serve.ts";
+import { Crew, type CrewOptions } from "./crew.ts";
+import type { Done, NamedModel, Task } from "./serve.ts";
 
 /** How a batch is spread. */
-export interface PoolOptions<M extends NamedModel> {
+export interface PoolOptions<M extends NamedModel> extends CrewOptions<M> {
   /** Number of workers, at least 1. */
   readonly workers: number;
-  /** Compiled models of all rows. */
-  readonly models: readonly M[];
-  /** Module of the worker. @default the row solver's worker */
-  readonly worker?: URL;
-  /** Stops the batch; rows under way are given up. */
+  /** Stops the batch: rows under way get {@linkcode LAST_WORD} to end. */
   readonly signal?: AbortSignal;
   /** Called for each row as it comes back, in any order. */
   readonly onDone: (done: Done) => void;
 }
 
-/** Messages a worker holds at once: one at work, one waiting. */
-const IN_FLIGHT = 2;
+/** Time that a worker gets to end its row when the batch is stopped (milliseconds). */
+export const LAST_WORD = 500;
 /** Rows of a message at most: about 50 us of messaging over 16 rows of 100 us and more. */
 const BATCH = 16;
+/** Workers may end this often in a row while no row is to blame. */
+const MOST_DEATHS = 3;
 
 /**
  * Solves rows.
  *
  * @param tasks Rows in any order; each comes back once unless the batch is stopped.
  * @param options Workers, models and what to do with a finished row.
- * @throws {Error} if a worker cannot start.
+ * @throws {Error} if a worker cannot start, or what `onDone` throws.
  */
 export function solveRows<M extends NamedModel>(
   tasks: readonly Task[],
   options: PoolOptions<M>,
 ): Promise<void> {
-  const { models, signal, onDone, worker: url = new URL("./worker.ts", import.meta.url) } = options;
-  const count = Math.min(options.workers, tasks.length);
-  let next = 0, open = tasks.length;
-  const running = new Set<Worker>();
+  const { signal, onDone } = options, count = Math.min(options.workers, tasks.length);
+  const again: Task[] = [], struck = new Set<number>(), crews = new Set<Crew<M>>();
+  let next = 0, open = tasks.length, deaths = 0, ended = false;
   const { promise, resolve, reject } = Promise.withResolvers<void>();
 
-  const finish = (error?: unknown) => {
-    for (const worker of running) worker.terminate();
-    running.clear();
+  const end = (error?: unknown) => {
+    if (ended) return;
+    ended = true;
     signal?.removeEventListener("abort", stop);
+    for (const crew of crews) crew.dismiss();
+    crews.clear();
     error === undefined ? resolve() : reject(error);
   };
-  const stop = () => finish();
+  const stop = () => {
+    for (const crew of crews) crew.askToStop();
+    if ([...crews].every((crew) => crew.held.size === 0)) end();
+    else setTimeout(end, LAST_WORD);
+  };
   const settle = (done: Done) => {
-    onDone(done);
-    if (--open === 0) finish();
+    if (ended) return;
+    try {
+      onDone(done);
+    } catch (error) {
+      return end(error);
+    }
+    if (--open === 0) end();
   };
-
+  const feed = (crew: Crew<M>) => {
+    while (!signal?.aborted && crew.held.size <= BATCH / 2) {
+      const retried = again.shift();
+      if (retried) {
+        crew.give([retried]);
+        continue;
+      }
+      const share = Math.min(BATCH, Math.ceil((tasks.length - next) / (4 * count)));
+      if (share === 0) return;
+      crew.give(tasks.slice(next, next + share));
+      next += share;
+    }
+  };
   const start = () => {
-    const worker = new Worker(url, { type: "module" });
-    const held = new Map<number, Task>();
-    let ready = false, messages = 0;
-    const feed = () => {
-      while (messages < IN_FLIGHT && next < tasks.length) {
-        const share = Math.ceil((tasks.length - next) / (2 * IN_FLIGHT * count));
-        const batch = tasks.slice(next, next + Math.min(BATCH, share));
-        next += batch.length;
-        messages++;
-        for (const task of batch) held.set(task.index, task);
-        worker.postMessage({ tasks: batch });
-      }
-    };
-    worker.onmessage = ({ data }: MessageEvent<FromWorker>) => {
-      if (!running.has(worker)) return;
-      if ("ready" in data) ready = true;
-      else {
-        messages--;
-        for (const done of data.done) held.delete(done.index);
-        feed(); // before the results are dealt with: the worker need not wait for that
-        try {
-          for (const done of data.done) settle(done);
-        } catch (error) {
-          finish(error);
+    const crew: Crew<M> = new Crew(options, {
+      ready: () => feed(crew),
+      done: (done, idle) => {
+        deaths = 0;
+        if (!signal?.aborted) feed(crew); // first: the worker need not wait for what follows
+        done.forEach(settle);
+        if (signal?.aborted && idle && [...crews].every((c) => c.idle)) end();
+      },
+      lost: (why, atWork) => {
+        crews.delete(crew);
+        if (!crew.started) return end(new Error(`Cannot start a worker as ${why}`));
+        for (const task of crew.held.values()) if (task !== atWork) again.push(task);
+        if (atWork === undefined && ++deaths >= MOST_DEATHS) {
+          return end(new Error(`Cannot keep a worker as it must not end between rows: ${why}`));
         }
-        return;
-      }
-      feed();
-    };
-    worker.onerror = (event) => {
-      event.preventDefault();
-      if (!running.delete(worker)) return;
-      worker.terminate();
-      if (!ready) return finish(new Error(`Cannot start a worker as ${event.message}`));
-      if (next < tasks.length) start();
-      for (const index of held.keys()) settle({ index, error: `worker ended: ${event.message}` });
-    };
-    running.add(worker);
-    worker.postMessage({ models });
+        const twice = atWork !== undefined && struck.has(atWork.index);
+        if (atWork && !twice) again.push(atWork);
+        if (atWork) struck.add(atWork.index);
+        if (twice) settle({ index: atWork.index, error: `${why}, twice` });
+        if (signal?.aborted) {
+          if ([...crews].every((c) => c.idle)) end();
+        } else if (!ended) {
+          start();
+          for (const c of crews) if (c.started) feed(c);
+        }
+      },
+    });
+    crews.add(crew);
   };
 
-  if (count === 0 || signal?.aborted) finish();
+  if (count === 0 || signal?.aborted) end();
   else {
     signal?.addEventListener("abort", stop);
     for (let i = 0; i < count; i++) start();

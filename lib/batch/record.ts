@@ -7,6 +7,7 @@ import type { Bounded } from "../observe/result.ts";
 import type { CoreIdentity } from "./core.ts";
 import type { Host } from "./host.ts";
 import { canonicalJson } from "./stamp.ts";
+import type { SummaryJson } from "./summary.ts";
 
 /** What a run computes, told apart from any other run. */
 export interface RunIdentity extends CoreIdentity {
@@ -56,7 +57,7 @@ export interface RowRecord {
   readonly evidence: Readonly<Record<string, BoundedJson>>;
 }
 
-/** A row that was not finished through a fault of the program. */
+/** A row that was not finished through a fault of the program, a crash or a limit. */
 export interface Unfinished {
   /** Case. */
   readonly case: string;
@@ -76,31 +77,49 @@ export interface RunRecord {
   readonly total: number;
   /** SHA-256 and rows of results.csv, once it is written. */
   readonly results?: { readonly sha256: string; readonly rows: number };
-  /** Rows that a fault of the program ended. */
+  /** Counts and extremes of results.csv, once it is written. */
+  readonly summary?: SummaryJson;
+  /** Rows that a fault of the program, a crash or a limit ended. */
   readonly unfinished: readonly Unfinished[];
   /** Finished rows by case. */
   readonly rows: Readonly<Record<string, RowRecord>>;
 }
 
 /**
- * Evidence as JSON.
+ * Bounded numbers as JSON.
  *
- * @param evidence Bounded numbers by name.
+ * @param numbers Bounded numbers by name.
  * @returns The same with infinities as text.
+ * @throws {Error} if one is NaN.
  */
-export function evidenceJson(
-  evidence: Readonly<Record<string, Bounded>>,
+export function boundedJson(
+  numbers: Readonly<Record<string, Bounded>>,
 ): Readonly<Record<string, BoundedJson>> {
   return Object.fromEntries(
-    Object.entries(evidence).map(([name, { value, error }]) => {
+    Object.entries(numbers).map(([name, { value, error }]) => {
       if (Number.isNaN(value)) {
-        throw new Error(
-          `Cannot record evidence ${name} as it must not be NaN: current value is NaN`,
-        );
+        throw new Error(`Cannot record ${name} as it must not be NaN: current value is NaN`);
       }
       const json = Number.isFinite(value) ? value : value > 0 ? "INF" : "-INF";
       const bound = error === undefined || !Number.isFinite(error) ? {} : { error };
       return [name, { value: json, ...bound }] as const;
+    }),
+  );
+}
+
+/**
+ * Bounded numbers from JSON.
+ *
+ * @param json What {@linkcode boundedJson} made.
+ * @returns Bounded numbers by name.
+ */
+export function boundedOf(
+  json: Readonly<Record<string, BoundedJson>>,
+): Readonly<Record<string, Bounded>> {
+  return Object.fromEntries(
+    Object.entries(json).map(([name, { value, error }]) => {
+      const number = value === "INF" ? Infinity : value === "-INF" ? -Infinity : value;
+      return [name, error === undefined ? { value: number } : { value: number, error }] as const;
     }),
   );
 }

@@ -4,6 +4,7 @@
  *
  * @module
  */
+import { CASE_FORMAT } from "./case_name.ts";
 import { MODEL_NAMES, STATE_NAMES } from "../model/input.ts";
 import {
   INNER_ENDS,
@@ -122,7 +123,7 @@ export const RESULT_COLUMNS: readonly OutputColumn[] = [
     name: "case",
     title: "Case",
     description: "Name of the row, from the parameter table.",
-    datatype: { format: "[A-Za-z0-9][A-Za-z0-9._-]{0,63}" },
+    datatype: { format: CASE_FORMAT },
   },
   {
     name: "model",
@@ -146,7 +147,7 @@ export const RESULT_COLUMNS: readonly OutputColumn[] = [
     name: "reason",
     title: "Reason",
     description: "A code, a colon and prose.",
-    datatype: { format: "[a-z-]+: .*" },
+    datatype: { format: "[a-z][a-z-]*: .*" },
     empty: "solved, nothing to say",
   },
   {
@@ -199,7 +200,7 @@ export const RESULT_COLUMNS: readonly OutputColumn[] = [
     name: "validity",
     title: "Validity",
     description: "inside, or codes of the limits of the semiclassical approximation passed.",
-    datatype: { format: "[a-z-]+(;[a-z-]+)*" },
+    datatype: { format: "[a-z][a-z-]*(;[a-z-]+)*" },
     empty: "not solved",
   },
   {

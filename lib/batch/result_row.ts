@@ -61,13 +61,26 @@ function numbersOf(row: TableRow, result: RowResult): Partial<Record<NumericColu
 }
 
 /**
+ * Text columns with what they match. Each begins with a letter or a digit, so that no spreadsheet takes a
+ * text of the table for a formula, and nothing need be added to texts that would have to be taken off again.
+ */
+const TEXTS = RESULT_COLUMNS.flatMap(({ name, datatype }) =>
+  datatype === "double" || name === "stamp" ? [] : [[name, new RegExp(`^(${datatype.format})$`)]]
+) as readonly (readonly [string, RegExp])[];
+
+/** A row with all columns and nothing in them. */
+const EMPTY: ResultCells = Object.fromEntries(RESULT_COLUMNS.map(({ name }) => [name, ""]));
+/** Numeric columns with their columns of bounds. */
+const PAIRS = NUMERIC_COLUMNS.map((name) => [name, `${name}_err`] as const);
+
+/**
  * Cells of one results row.
  *
  * @param row The row of the parameter table.
  * @param result What the solver returned for it.
  * @param stamp Its stamp.
  * @returns Text by column name, empty where not applicable.
- * @throws {Error} if the result has a NaN, a missing or negative bound, or a kind without being solved.
+ * @throws {Error} if the result has a text that its column does not allow, a NaN, a missing or negative bound, or a kind without being solved.
  */
 export function resultCells(row: TableRow, result: RowResult, stamp: string): ResultCells {
   const { input } = row;
@@ -77,8 +90,7 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
   }
   if (!solved && result.reason === "") fail(row, "a reason must be given", result.outcome);
   const numbers = numbersOf(row, result);
-  const cells: Record<string, string> = {};
-  for (const { name } of RESULT_COLUMNS) cells[name] = "";
+  const cells: Record<string, string> = { ...EMPTY };
   const write = (name: string, value: number | undefined) => {
     if (value !== undefined) cells[name] = writeNumber(value);
   };
@@ -98,13 +110,18 @@ export function resultCells(row: TableRow, result: RowResult, stamp: string): Re
   write("a", input.a);
   write("wall_radius", input.wallRadius);
   write("tolerance", input.tolerance);
-  for (const name of NUMERIC_COLUMNS) {
+  for (const [name, bound] of PAIRS) {
     const number = numbers[name];
     if (number === undefined) continue;
     check(row, name, number);
     write(name, number.value);
-    write(`${name}_err`, number.error);
+    write(bound, number.error);
   }
   checkUnderflow(row, numbers);
+  for (const [name, format] of TEXTS) {
+    const text = cells[name]!;
+    if (text === "" || format.test(text)) continue;
+    fail(row, `${name} must match ${format.source}`, JSON.stringify(text));
+  }
   return cells;
 }

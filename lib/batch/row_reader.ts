@@ -21,6 +21,7 @@ import {
   PARAMETER_COLUMNS,
   type ParameterColumn,
 } from "./columns.ts";
+import { caseFault } from "./case_name.ts";
 import { type Fault, quoted } from "./fault.ts";
 import { nearest } from "./nearest.ts";
 import { readNumber } from "./number.ts";
@@ -51,17 +52,10 @@ const LARGEST_MASS = 1e70; // of anomaly4d, in Planck masses: beyond, powers lea
 
 type Report = (column: string, text: string) => void;
 
-const CASE = /^[A-Za-z0-9][A-Za-z0-9._-]{0,63}$/;
-
 function readCase(text: string, report: Report): string {
+  const must = caseFault(text);
   if (text === "") report("case", "must be given: it names the row and its profile");
-  else if (!CASE.test(text)) {
-    report(
-      "case",
-      "must be at most 64 ASCII letters, digits, dots, underscores or hyphens and start with a " +
-        `letter or digit: current value is ${quoted(text)}`,
-    );
-  }
+  else if (must) report("case", `${must}: current value is ${quoted(text)}`);
   return text;
 }
 
@@ -102,17 +96,44 @@ function lacks(
   return undefined;
 }
 
+/** What a model and a state ask of a row. */
+interface Demands {
+  /** Columns they lack, with what is to be said about them. */
+  readonly lacked: ReadonlyMap<string, string>;
+  /** Groups of columns of which one must be given. */
+  readonly groups: readonly (readonly string[])[];
+  /** Columns that must be given. */
+  readonly always: readonly string[];
+}
+
+const DEMANDS = new Map<string, Demands>();
+
+/** Demands of a model and a state, worked out once. */
+function demandsOf(model: ModelName | undefined, state: StateName | undefined): Demands {
+  const key = `${model} ${state}`, known = DEMANDS.get(key);
+  if (known) return known;
+  const lacked = new Map(PARAMETER_COLUMNS.flatMap((column) => {
+    const text = lacks(column, model, state);
+    return text === undefined ? [] : [[column.name, text] as const];
+  }));
+  const possible = (name: string) => !lacked.has(name);
+  const groups = EXCLUSIVE.map((group) => group.filter(possible)).filter((g) => g.length > 0);
+  const demands = { lacked, groups, always: ALWAYS.filter(possible) };
+  DEMANDS.set(key, demands);
+  return demands;
+}
+
 function readNumbers(
   cells: Cells,
   model: ModelName | undefined,
   state: StateName | undefined,
   report: Report,
 ): Map<string, number> {
-  const values = new Map<string, number>();
+  const values = new Map<string, number>(), { lacked } = demandsOf(model, state);
   for (const column of PARAMETER_COLUMNS) {
     const text = cells.text(column.name);
     if (text === "") continue;
-    const missing = lacks(column, model, state);
+    const missing = lacked.get(column.name);
     if (missing) {
       report(column.name, `${missing}: current value is ${quoted(text)}`);
       continue;
@@ -133,11 +154,8 @@ function checkGroups(
   state: StateName,
   report: Report,
 ): void {
-  const column = (name: string) => PARAMETER_COLUMNS.find((c) => c.name === name)!;
-  const possible = (name: string) => lacks(column(name), model, state) === undefined;
-  for (const group of EXCLUSIVE) {
-    const names = group.filter(possible);
-    if (names.length === 0) continue;
+  const { groups, always } = demandsOf(model, state);
+  for (const names of groups) {
     const given = names.filter((n) => cells.text(n) !== "");
     if (given.length === 1) continue;
     const must = names.length === 1
@@ -148,8 +166,8 @@ function checkGroups(
       `${must} for model ${model} with state ${state}: current count is ${given.length}`,
     );
   }
-  for (const name of ALWAYS) {
-    if (!possible(name) || cells.text(name) !== "") continue;
+  for (const name of always) {
+    if (cells.text(name) !== "") continue;
     report(name, `must be given for model ${model} with state ${state}: current value is empty`);
   }
 }

@@ -3,17 +3,22 @@
  *
  * @module
  */
-import { FILES, openFolder, profilePath, writeWhole } from "./folder.ts";
+import { companionsHeld, type Held, heldRows } from "./kept.ts";
+import { writeRecord, writeTables } from "./finish.ts";
+import { FILES, inspectFolder, openFolder, readIfPresent } from "./folder.ts";
 import { gitCommit, hostFacts } from "./host.ts";
-import { companionsHeld, type FinishedRow, keptRows } from "./kept.ts";
-import { profilesMetadata, resultsMetadata } from "./metadata.ts";
+import { Lock } from "./lock.ts";
+import { solveMissing } from "./missing.ts";
 import { type Plan, planRun } from "./plan.ts";
-import { solveRows } from "./pool.ts";
-import { evidenceJson, type RunPart, type RunRecord, type Unfinished } from "./record.ts";
-import { type ResultCells, resultCells } from "./result_row.ts";
-import { resultsText } from "./results_file.ts";
-import type { Done } from "./serve.ts";
+import type { Counts } from "./progress.ts";
+import type { RunPart, Unfinished } from "./record.ts";
+import type { RecordHead } from "./record_file.ts";
+import { share } from "./reuse.ts";
 import { sha256 } from "./stamp.ts";
+import { onDisk } from "./storage.ts";
+import { Store } from "./store.ts";
+import { type Summary, summaryJson, summaryOf } from "./summary.ts";
+import { writeWhole } from "./whole_file.ts";
 
 /** What is run, and how. */
 export interface RunOptions {
@@ -23,6 +28,12 @@ export interface RunOptions {
   readonly folder: string;
   /** Number of workers; enters no result. */
   readonly workers: number;
+  /** Longest time of one row (seconds). @default 300 */
+  readonly rowLimit?: number;
+  /** Memory of one worker (MiB). @default 1024 */
+  readonly memoryLimit?: number;
+  /** Folder of finished rows shared with other runs. */
+  readonly store?: string;
   /** Rows that get a profile. @default all of up to 200 rows, else none */
   readonly profiles?: "all" | "none" | { readonly lines: string };
   /** Whether files of another run in the folder may be removed. @default false */
@@ -32,30 +43,24 @@ export interface RunOptions {
   /** Stops the run; finished rows are kept. */
   readonly signal?: AbortSignal;
   /** Called once before the first row and after each. */
-  readonly onProgress?: (progress: Progress) => void;
+  readonly onProgress?: (progress: Counts) => void;
+  /** Called with what the user should know: a lock taken over, records dropped. */
+  readonly onNotice?: (text: string) => void;
   /** Module of the worker. @default the row solver's worker */
   readonly worker?: URL;
-}
-
-/** How far a run is. */
-export interface Progress {
-  /** Rows finished by this start of the command. */
-  readonly done: number;
-  /** Rows it has to do. */
-  readonly total: number;
-  /** Rows taken from the folder as they were. */
-  readonly kept: number;
 }
 
 /** What came of a run. */
 export interface RunOutcome {
   /** done; nothing-to-do: the folder held it all; interrupted: rows are missing. */
   readonly status: "done" | "nothing-to-do" | "interrupted";
-  /** Finished rows in table order. */
-  readonly rows: readonly ResultCells[];
   /** Rows of the parameter table. */
   readonly total: number;
-  /** Rows that a fault of the program ended. */
+  /** Finished rows. */
+  readonly finished: number;
+  /** Counts and extremes of results.csv; absent if the run was stopped before it was written. */
+  readonly summary?: Summary;
+  /** Rows that a fault of the program, a crash or a limit ended. */
   readonly unfinished: readonly Unfinished[];
 }
 
@@ -74,119 +79,103 @@ async function beginPart(options: RunOptions): Promise<RunPart> {
   };
 }
 
-function writeJson(path: string, value: unknown): void {
-  writeWhole(path, `${JSON.stringify(value, null, 2)}\n`);
+function finishedOf(plan: Plan, { places }: Held): number {
+  return plan.stamps.reduce((n, stamp) => places.has(stamp) ? n + 1 : n, 0);
 }
 
-/** Solves what is missing; finished rows are added to `finished`. */
-async function solveMissing(
-  plan: Plan,
-  finished: Map<number, FinishedRow>,
-  options: RunOptions,
-): Promise<Unfinished[]> {
-  const { folder, signal, worker } = options;
-  const kept = finished.size, unfinished: (Unfinished & { readonly index: number })[] = [];
-  const tasks = plan.rows.flatMap(({ input, case: name }, index) =>
-    finished.has(index) ? [] : [{ index, input, profile: plan.profiles.has(name) }]
-  );
-  let done = 0;
-  const report = () => options.onProgress?.({ done, total: tasks.length, kept });
-  const contract = (answer: Done): FinishedRow | string => {
-    if ("error" in answer) return answer.error;
-    const { index, result, profile } = answer;
-    const row = plan.rows[index]!, stamp = plan.stamps[index]!;
-    const asked = plan.profiles.has(row.case);
-    const digest = profile === undefined ? null : sha256(profile);
-    try {
-      const cells = resultCells(row, result, stamp), evidence = evidenceJson(result.evidence);
-      return { cells, record: { stamp, ...(asked ? { profile: digest } : {}), evidence } };
-    } catch (error) {
-      return (error as Error).message; // a fault of the program, never written as a result
-    }
-  };
-  const onDone = (answer: Done) => {
-    const { index } = answer, row = contract(answer), name = plan.rows[index]!.case;
-    if (typeof row === "string") unfinished.push({ index, case: name, error: row });
-    else {
-      if ("profile" in answer) writeWhole(`${folder}/${profilePath(name)}`, answer.profile!);
-      finished.set(index, row);
-    }
-    done++;
-    report();
-  };
-  report();
-  await solveRows(tasks, {
-    workers: options.workers,
-    models: plan.models,
-    onDone,
-    ...(signal ? { signal } : {}),
-    ...(worker ? { worker } : {}),
-  });
-  return unfinished.sort((x, y) => x.index - y.index).map(({ index: _, ...rest }) => rest);
-}
-
-function inOrder(plan: Plan, finished: ReadonlyMap<number, FinishedRow>): FinishedRow[] {
-  return plan.rows.flatMap((_, i) => finished.has(i) ? [finished.get(i)!] : []);
-}
-
-/** Writes everything but the record; returns the digest of results.csv. */
-function writeResults(
-  plan: Plan,
-  finished: ReadonlyMap<number, FinishedRow>,
-  folder: string,
-): string {
-  const rows = inOrder(plan, finished);
-  const text = resultsText(rows.map((row) => row.cells));
-  const profiled = rows.filter((row) => typeof row.record.profile === "string");
-  writeWhole(`${folder}/${FILES.results}`, text);
-  writeJson(`${folder}/${FILES.metadata}`, resultsMetadata());
-  writeJson(
-    `${folder}/${FILES.profilesMetadata}`,
-    profilesMetadata(profiled.map((row) => row.cells["case"]!)),
-  );
-  return sha256(text);
+function resultsHeld(folder: string, previous: RecordHead): boolean {
+  const bytes = readIfPresent(`${folder}/${FILES.results}`);
+  return bytes !== undefined && sha256(bytes) === previous.results?.sha256;
 }
 
 /**
- * Runs a table into a folder. Rows that the folder holds from the same table and core are kept.
+ * Runs a table into a folder. Rows that the folder holds with the same stamp are kept.
  *
  * @param options Table, folder, workers and more.
  * @returns What came of it; failed and refused rows are part of a run that is done.
  * @throws {TableError} if the table or the list of profiles has faults; nothing was run.
- * @throws {FolderError} if the folder holds another run and may not be replaced.
+ * @throws {FolderError} if the folder holds another run and may not be replaced, or another process has it.
+ * @throws {StorageError} if the disk refuses; finished rows are kept.
  */
 export async function runTable(options: RunOptions): Promise<RunOutcome> {
-  const { folder } = options;
+  const { folder, replace = false } = options;
   const plan = await planRun(options.table, options.profiles);
-  const total = plan.rows.length;
-  const previous = openFolder(folder, plan.identity, options.replace ?? false);
-  const finished = keptRows(plan, folder, previous);
-  const kept = finished.size;
-  const cells = () => inOrder(plan, finished).map((row) => row.cells);
-  if (previous?.status === "done" && kept === total && companionsHeld(folder)) {
-    return { status: "nothing-to-do", rows: cells(), total, unfinished: [] };
+  onDisk(`write to ${folder}`, () => {
+    inspectFolder(folder, plan.identity, replace);
+    Deno.mkdirSync(folder, { recursive: true });
+  });
+  const lock = await Lock.take(folder);
+  try {
+    if (lock.stale) {
+      const { pid, host, started } = lock.stale;
+      options.onNotice?.(`Taken over from process ${pid} on ${host}, which began ${started}`);
+    }
+    const previous = openFolder(folder, plan.identity, { replace, profiles: plan.profiles });
+    const held = heldRows(plan, folder);
+    try {
+      return await complete(plan, held, previous, options);
+    } finally {
+      held.journal.close();
+    }
+  } finally {
+    lock.release();
+  }
+}
+
+/** Completes a folder that is ours. */
+async function complete(
+  plan: Plan,
+  held: Held,
+  previous: RecordHead | undefined,
+  options: RunOptions,
+): Promise<RunOutcome> {
+  const { folder, signal } = options, total = plan.rows.length, before = finishedOf(plan, held);
+  if (held.journal.damaged > 0) {
+    options.onNotice?.(`Solved again: ${held.journal.damaged} damaged in ${FILES.journal}`);
+  }
+  const store = options.store === undefined
+    ? undefined
+    : new Store(options.store, (text) => options.onNotice?.(text));
+  if (
+    previous?.status === "done" && previous.summary && before === total &&
+    companionsHeld(folder) && resultsHeld(folder, previous)
+  ) {
+    if (store) await share(plan, held, store, options);
+    const summary = summaryOf(previous.summary);
+    return { status: "nothing-to-do", total, finished: total, summary, unfinished: [] };
   }
   const part = await beginPart(options);
-  const record = (rest: Partial<RunRecord>, now: RunPart): RunRecord => ({
+  const head = (rest: Partial<RecordHead>, now: RunPart): RecordHead => ({
     status: "running",
     runs: [...previous?.runs ?? [], now],
     identity: plan.identity,
     total,
     unfinished: [],
-    rows: previous?.rows ?? {},
     ...(previous?.results ? { results: previous.results } : {}),
     ...rest,
   });
-  writeJson(`${folder}/${FILES.record}`, record({}, part));
+  await writeRecord(head({}, part), folder);
   writeWhole(`${folder}/${FILES.table}`, plan.table);
-  const unfinished = await solveMissing(plan, finished, options);
-  const sha = writeResults(plan, finished, folder);
-  const status = finished.size === total ? "done" : "interrupted";
-  const rows = Object.fromEntries(
-    plan.rows.flatMap((row, i) => finished.has(i) ? [[row.case, finished.get(i)!.record]] : []),
+  if (store) {
+    const taken = await share(plan, held, store, options);
+    if (taken > 0) options.onNotice?.(`Taken from the store: ${taken} of ${total} rows`);
+  }
+  const kept = finishedOf(plan, held);
+  const unfinished = await solveMissing(plan, held, options, store);
+  const finished = finishedOf(plan, held);
+  const ended = () => ({ ...part, ended: new Date().toISOString(), rows: finished - kept });
+  const tables = signal?.aborted ? undefined : await writeTables(plan, held, folder, signal);
+  if (tables === undefined) {
+    await writeRecord(head({ status: "interrupted", unfinished }, ended()), folder);
+    return { status: "interrupted", total, finished, unfinished };
+  }
+  const status = finished === total ? "done" : "interrupted";
+  const { results, summary, profiled } = tables;
+  const rows = { plan, held, profiled };
+  await writeRecord(
+    head({ status, results, summary: summaryJson(summary), unfinished }, ended()),
+    folder,
+    rows,
   );
-  const results = { sha256: sha, rows: finished.size };
-  const ended = { ...part, ended: new Date().toISOString(), rows: finished.size - kept };
-  writeJson(`${folder}/${FILES.record}`, record({ status, results, rows, unfinished }, ended));
-  return { status, rows: cells(), total, unfinished };
+  return { status, total, finished, summary, unfinished };
 }

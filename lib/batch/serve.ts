@@ -28,13 +28,25 @@ export interface NamedModel {
   readonly name: string;
 }
 
-/** Message to a worker: first the models, then rows. */
+/** Message to a worker: first the models and the board, then rows. */
 export type ToWorker<M extends NamedModel = NamedModel> =
-  | { readonly models: readonly M[] }
+  | { readonly models: readonly M[]; readonly board: SharedArrayBuffer }
   | { readonly tasks: readonly Task[] };
 
-/** Message from a worker: it is ready, or rows are done. */
-export type FromWorker = { readonly ready: true } | { readonly done: readonly Done[] };
+/** Message from a worker: it is ready, or rows are done; `idle` if it has no more. */
+export type FromWorker =
+  | { readonly ready: true }
+  | { readonly done: readonly Done[]; readonly idle: boolean };
+
+/** What worker and pool see of each other at any time: cells of 32 bits. */
+export const BOARD = {
+  /** Index of the row at work plus one; 0 between rows. */
+  atWork: 0,
+  /** Not 0 if the worker shall give up the rows it has not begun. */
+  stop: 1,
+  /** Number of cells. */
+  cells: 2,
+} as const;
 
 /** A row solver. */
 export type ComputeRow<M> = (
@@ -43,10 +55,16 @@ export type ComputeRow<M> = (
   options: { readonly profile: boolean },
 ) => { readonly result: RowResult; readonly profile?: Profile };
 
-interface WorkerScope {
-  onmessage: ((event: MessageEvent) => void) | null;
+/** The worker's end of the line. */
+export interface Port {
+  /** Hears messages. */
+  on(event: "message", hear: (data: unknown) => void): void;
+  /** Answers. */
   postMessage(message: FromWorker): void;
 }
+
+/** Longest time that a result waits for its neighbours (milliseconds). */
+const GATHER = 100;
 
 function solve<M extends NamedModel>(
   compute: ComputeRow<M>,
@@ -66,18 +84,39 @@ function solve<M extends NamedModel>(
   }
 }
 
+/** The line of the thread that this is. */
+export function ownPort(): Port {
+  // Taken from the process and not imported: a worker loads nothing but the row solver.
+  return process.getBuiltinModule("node:worker_threads").parentPort as unknown as Port;
+}
+
 /**
  * Answers the messages of a batch inside a worker. An error of one row is the answer for that row alone.
  *
  * @param compute The row solver.
+ * @param port The worker's end of the line. @default that of this thread
  */
-export function serve<M extends NamedModel>(compute: ComputeRow<M>): void {
-  const scope = globalThis as unknown as WorkerScope;
+export function serve<M extends NamedModel>(compute: ComputeRow<M>, port: Port = ownPort()): void {
   const models = new Map<string, M>();
-  scope.onmessage = ({ data }: MessageEvent<ToWorker<M>>) => {
+  let board: Int32Array = new Int32Array(BOARD.cells);
+  port.on("message", (message) => {
+    const data = message as ToWorker<M>;
     if ("models" in data) {
+      board = new Int32Array(data.board);
       for (const model of data.models) models.set(model.name, model);
-      scope.postMessage({ ready: true });
-    } else scope.postMessage({ done: data.tasks.map((task) => solve(compute, models, task)) });
-  };
+      return port.postMessage({ ready: true });
+    }
+    let done: Done[] = [], last = performance.now();
+    for (const task of data.tasks) {
+      if (Atomics.load(board, BOARD.stop) !== 0) break;
+      Atomics.store(board, BOARD.atWork, task.index + 1);
+      done.push(solve(compute, models, task));
+      if (performance.now() - last < GATHER) continue;
+      port.postMessage({ done, idle: false });
+      done = [];
+      last = performance.now();
+    }
+    Atomics.store(board, BOARD.atWork, 0);
+    port.postMessage({ done, idle: true });
+  });
 }

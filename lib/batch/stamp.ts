@@ -55,29 +55,31 @@ export function canonicalJson(value: unknown): string {
  * @returns A JSON object.
  */
 export function stampInputs(input: RowInput): Readonly<Record<string, string | number>> {
+  // Keys stand in the order in which RFC 8785 sorts them.
   const inputs: Record<string, string | number | undefined> = {
-    model: input.model,
-    state: input.state,
+    a: input.a,
+    bath_ratio_minus_one: input.bathRatioMinusOne,
+    beta: input.beta,
+    dirac_spinors: input.diracSpinors,
+    horizon_dilaton: input.horizonDilaton,
     kappa: input.kappa,
     lambda: input.lambda,
     mass: input.mass,
     mass_above_critical: input.massAboveCritical,
-    horizon_dilaton: input.horizonDilaton,
-    bath_ratio_minus_one: input.bathRatioMinusOne,
-    a: input.a,
-    wall_radius: input.wallRadius,
+    model: input.model,
     real_scalars: input.realScalars,
-    dirac_spinors: input.diracSpinors,
-    vectors: input.vectors,
-    beta: input.beta,
+    state: input.state,
     tolerance: input.tolerance,
+    vectors: input.vectors,
+    wall_radius: input.wallRadius,
   };
-  const present = Object.entries(inputs).filter(([, value]) => value !== undefined);
-  return Object.fromEntries(present) as Record<string, string | number>;
+  for (const name in inputs) if (inputs[name] === undefined) delete inputs[name];
+  return inputs as Record<string, string | number>;
 }
 
 /**
- * Prepares the stamps of many rows that share a context: the text around the inputs is written once.
+ * Prepares the stamps of many rows that share a context: the text around the inputs is written once, and
+ * what stands before them is hashed once.
  *
  * @param context What the rows share.
  * @returns A function from a row's input to its stamp.
@@ -85,7 +87,11 @@ export function stampInputs(input: RowInput): Readonly<Record<string, string | n
 export function stamper(context: StampContext): (input: RowInput) => string {
   const { core, expressions, pins, runtime, settings } = context;
   // RFC 8785 sorts keys: core, expressions, inputs, pins, runtime, settings.
-  const before = canonicalJson({ core, expressions }).slice(0, -1);
+  const before = `${canonicalJson({ core, expressions }).slice(0, -1)},"inputs":`;
   const after = canonicalJson({ pins, runtime, settings }).slice(1);
-  return (input) => sha256(`${before},"inputs":${canonicalJson(stampInputs(input))},${after}`);
+  const begun = createHash("sha256").update(before);
+  // Of an object with sorted keys, ASCII texts and numbers, ECMAScript's JSON is the canonical one.
+  return (input) => {
+    return begun.copy().update(`${JSON.stringify(stampInputs(input))},${after}`).digest("hex");
+  };
 }

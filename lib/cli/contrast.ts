@@ -5,7 +5,8 @@
  * @module
  */
 import { ComparisonFile } from "../batch/comparison/comparison_file.ts";
-import { readIfPresent, writeWhole } from "../batch/folder.ts";
+import { readIfPresent } from "../batch/folder.ts";
+import { writeWhole } from "../batch/whole_file.ts";
 import { compareRuns, type RunComparison } from "../show/compare_runs.ts";
 import type { CompareRequest } from "./compare_options.ts";
 import { UsageError } from "./options.ts";

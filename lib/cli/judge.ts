@@ -10,7 +10,7 @@ import { ledgerDocument, ledgerTex } from "../audit/ledger_tex.ts";
 import { runClaims } from "../audit/run_claims.ts";
 import { runReady } from "../audit/run_ready.ts";
 import { AUDIT_VERSIONS } from "../audit/versions.ts";
-import { writeWhole } from "../batch/folder.ts";
+import { writeWhole } from "../batch/whole_file.ts";
 import { closeAlgebra } from "../expr/proposer.ts";
 import type { AuditRequest } from "./audit_options.ts";
 import { UsageError } from "./options.ts";

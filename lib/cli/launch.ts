@@ -10,6 +10,15 @@ import { fileURLToPath } from "node:url";
 /** Folder of the program. */
 const ROOT = fileURLToPath(new URL("../../", import.meta.url));
 
+/** A child busy elsewhere than in its workers hears no signal; what it had finished is on disk. */
+const PATIENCE = 1500; // milliseconds
+
+function kill(child: Deno.ChildProcess, signal: Deno.Signal): void {
+  try {
+    child.kill(signal);
+  } catch { /* it has ended already */ }
+}
+
 /** What the child may do besides reading the program. */
 export interface Grant {
   /** Files and folders it may read. */
@@ -54,16 +63,20 @@ export async function launch(module: string, grant: Grant, request: unknown): Pr
   if (grant.write.length > 0) flags.push(`--allow-write=${list(grant.write)}`);
   if (grant.env) flags.push(`--allow-env=${grant.env.join(",")}`);
   if (grant.sys) flags.push(`--allow-sys=${grant.sys.join(",")}`);
-  return await runDeno([...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)]);
+  return await runDeno(
+    [...flags, programPath(`lib/cli/${module}`), JSON.stringify(request)],
+    PATIENCE,
+  );
 }
 
 /**
  * Runs `deno run` to its end. Signals that stop a command are passed on.
  *
  * @param args Permissions, module, arguments.
+ * @param patience Time it gets to end after such a signal (milliseconds). @default any
  * @returns Its exit status; 3 if it was killed.
  */
-export async function runDeno(args: readonly string[]): Promise<number> {
+export async function runDeno(args: readonly string[], patience?: number): Promise<number> {
   const child = new Deno.Command("deno", {
     args: ["run", ...args],
     stdin: "null",
@@ -72,9 +85,8 @@ export async function runDeno(args: readonly string[]): Promise<number> {
   }).spawn();
   for (const signal of ["SIGINT", "SIGTERM"] as const) {
     Deno.addSignalListener(signal, () => {
-      try {
-        child.kill(signal);
-      } catch { /* it has ended already */ }
+      kill(child, signal);
+      if (patience !== undefined) setTimeout(() => kill(child, "SIGKILL"), patience);
     });
   }
   const { code, signal } = await child.status;

@@ -1,5 +1,5 @@
 /**
- * Noticing that `deno task` around this process is gone: it passes signals on, but not SIGKILL.
+ * Noticing that the process around this one is gone: it passes signals on, but not SIGKILL.
  *
  * @module
  */
@@ -15,6 +15,15 @@ const INTERVAL = 500;
  */
 export function watchTask(onOrphaned: () => void): void {
   if (Deno.env.get("INIT_CWD") === undefined) return; // set by deno task
+  watchParent(onOrphaned);
+}
+
+/**
+ * Calls back once if the process that started this one ends before it.
+ *
+ * @param onOrphaned called once
+ */
+export function watchParent(onOrphaned: () => void): void {
   const parent = Deno.ppid;
   const timer = setInterval(() => {
     if (Deno.ppid === parent) return;

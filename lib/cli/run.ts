@@ -42,11 +42,13 @@ async function executeSurvey(out: string): Promise<number> {
  * @returns Exit status.
  */
 export async function solveTable(request: RunRequest): Promise<number> {
-  const { table, out, profiles } = request;
+  const { table, out, profiles, store, progressLines } = request;
   const lists = typeof profiles === "object" ? [profiles.file] : [];
+  const stores = store === undefined ? [] : [store];
+  const lines = progressLines === undefined || progressLines === "-" ? [] : [progressLines];
   return await launch("solve.ts", {
-    read: [table, out, ...lists],
-    write: [out],
+    read: [table, out, ...lists, ...stores],
+    write: [out, ...stores, ...lines],
     sys: ["hostname", "osRelease", "systemMemoryInfo"],
   }, request);
 }

@@ -3,8 +3,9 @@
  *
  * @module
  */
-import { readIfPresent, writeWhole } from "../batch/folder.ts";
+import { readIfPresent } from "../batch/folder.ts";
 import { gridTable } from "../batch/grid.ts";
+import { writeWhole } from "../batch/whole_file.ts";
 import type { GridRequest } from "./grid_options.ts";
 import { UsageError } from "./options.ts";
 import { closing, STATUS } from "./status.ts";

@@ -6,8 +6,9 @@
 import { basename } from "node:path";
 import { fileURLToPath } from "node:url";
 import { readCsv } from "../batch/csv.ts";
-import { FILES, readIfPresent, readRecord } from "../batch/folder.ts";
+import { FILES, readIfPresent } from "../batch/folder.ts";
 import { readResultNumber } from "../batch/number.ts";
+import { readRecordHead } from "../batch/record_file.ts";
 import { RESULT_COLUMNS } from "../batch/result_columns.ts";
 import type { ResultCells } from "../batch/result_row.ts";
 import { sha256 } from "../batch/stamp.ts";
@@ -61,7 +62,7 @@ export function readRun(folder: string = Deno.env.get(RUN_VARIABLE) || DEMO): Ru
     );
   }
   const stamp = sha256(results);
-  const written = readRecord(folder)?.results?.sha256;
+  const written = readRecordHead(`${folder}/${FILES.record}`)?.results?.sha256;
   if (written !== undefined && written !== stamp) {
     throw new Error(
       `Cannot read the run as ${FILES.results} must be as the run wrote it (SHA-256 ${written}): ` +

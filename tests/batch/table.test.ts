@@ -105,6 +105,12 @@ describe("A parameter table with a fault", () => {
     );
   });
 
+  it("with a quotation mark astray in the header has that fault and no other", () => {
+    expect(faults('case,mo"del,state,kappa,mass\nx,rst,boulware,1,1\n')).toEqual([
+      "line 1: a quotation mark must begin a field and be doubled inside it",
+    ]);
+  });
+
   it("gives line breaks inside quoted cells their lines", () => {
     const text = 'case,model,state,kappa,mass\n"a\nb",rst,boulware,1,1\nx,rst,boulware,0,1\n';
     expect(faults(text).join("\n")).toMatch(/line 4, column kappa/);

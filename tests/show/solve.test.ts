@@ -1,5 +1,5 @@
 import { describe, expect, it } from "vitest";
-import { DISPLAY, OptionsError, solve, type SolveOptions } from "@backstamp/backstamp";
+import { DISPLAY, OptionsError, readRun, solve, type SolveOptions } from "@backstamp/backstamp";
 import { runTable } from "../../lib/batch/run.ts";
 import { execute } from "./notebook/notebooks.ts";
 
@@ -37,11 +37,8 @@ describe("solve", () => {
   it("says what a run of the same row writes, stamp included", async () => {
     const folder = await Deno.makeTempDir();
     const text = "case,model,state,kappa,mass,bath_ratio\nx,cghs,thermal,2,7,0.5\n";
-    const { rows: [cells] } = await runTable({
-      table: new TextEncoder().encode(text),
-      folder,
-      workers: 1,
-    });
+    await runTable({ table: new TextEncoder().encode(text), folder, workers: 1 });
+    const [cells] = readRun(folder).rows;
     const solution = await solve({
       model: "cghs",
       state: "thermal",

@@ -9,8 +9,9 @@ import { type CsvRecord, lengthFault } from "../csv.ts";
 import { csvRecords } from "../csv_stream.ts";
 import { csvLines } from "../csv_writer.ts";
 import type { Fault } from "../fault.ts";
-import { FILES, readRecord } from "../folder.ts";
+import { FILES } from "../folder.ts";
 import type { RunIdentity, RunRecord } from "../record.ts";
+import { readRecordHead } from "../record_file.ts";
 import type { ResultCells } from "../result_row.ts";
 import { ComparisonError, faultText, MOST_FAULTS } from "./comparison_error.ts";
 import { rowChecker } from "./row_check.ts";
@@ -124,9 +125,9 @@ async function sourceOf(opened: Opened): Promise<Source> {
 }
 
 function knownRun(folder: string): { readonly run?: KnownRun } {
-  const record = readRecord(folder);
+  const record = readRecordHead(`${folder}/${FILES.record}`);
   if (record === undefined) return {};
-  const { identity, total, results } = record; // the rest, one entry a row, is let go
+  const { identity, total, results } = record;
   return { run: { identity, total, ...(results ? { results } : {}) } };
 }
 
@@ -175,7 +176,8 @@ function openRows({ rows, name, identity, folder, inputs }: RowsInMemory): Opene
     }
   }
   const digest = () => hash.copy().digest("hex");
-  const told = identity ?? (folder === undefined ? undefined : readRecord(folder)?.identity);
+  const told = identity ??
+    (folder === undefined ? undefined : readRecordHead(`${folder}/${FILES.record}`)?.identity);
   const run = told === undefined ? {} : { run: { identity: told } };
   const given = inputs ? { inputs } : folder === undefined ? {} : { folder };
   return { name, place: name, records: records(), faults: [], digest, ...run, ...given };
