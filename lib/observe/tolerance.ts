@@ -13,7 +13,7 @@ import type { Bounded, NumericColumn } from "./result.ts";
 export function unmet(input: RowInput, numbers: Partial<Record<NumericColumn, Bounded>>): string {
   const spherical = RADIAL_MODELS.includes(input.model);
   for (const [name, b] of Object.entries(numbers)) {
-    if (!b.error || !Number.isFinite(b.value)) continue;
+    if (b.error === undefined || b.error === 0 || !Number.isFinite(b.value)) continue;
     if (name === "minus_gtt_locus" && b.value < 1e-300) continue;
     const size = name === "dilaton_locus" && !spherical
       ? 1
@@ -21,9 +21,10 @@ export function unmet(input: RowInput, numbers: Partial<Record<NumericColumn, Bo
       ? Math.max(Math.abs(b.value), input.kappa * (input.lambda ?? 0))
       : Math.abs(b.value);
     if (!(b.error <= input.tolerance * size)) {
-      return `tolerance: the bound of ${name} is ${
-        b.error.toExponential(1)
-      }, the tolerance asks for ${(input.tolerance * size).toExponential(1)}`;
+      const bound = Number.isNaN(b.error) ? "unknown" : b.error.toExponential(1);
+      return `tolerance: the bound of ${name} is ${bound}, the tolerance asks for ${
+        (input.tolerance * size).toExponential(1)
+      }`;
     }
   }
   return "";
