@@ -49,6 +49,7 @@ describe("Compiling a model", () => {
       bpp: true,
       solvable: true,
       swave: false,
+      anomaly4d: false,
     });
   });
 
