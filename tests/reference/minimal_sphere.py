@@ -6,7 +6,8 @@ gamma y^4 + 2 p y = 1 - p^2, gamma = (a + beta/2)/(pi R^2), D = 1 - p^2 + 3 gamm
 d ln R/dp = 2 p/D, d psi/dp = 2 y/D. Integrated by mpmath.odefun from vacuum far out.
 
 Usage: minimal_sphere.py DIGITS A BETA MASS ... : for each triple (rational a as p/q, double beta, double
-mass) prints the triple, ln(R/M) and 2 psi on the sphere, with an error below 10^(7 - DIGITS).
+mass) prints the triple, ln(R/M) and 2 psi on the sphere. The lines of minimal_sphere.csv were made with 40
+digits, the one of mass 1e35 with 48: less leaves an error of 1e-19 in it.
 """
 
 import sys
