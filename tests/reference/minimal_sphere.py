@@ -1,4 +1,4 @@
-"""The minimal sphere of the anomaly's leading tensor by mpmath, 45 digits.
+"""The minimal sphere of the anomaly's leading tensor by mpmath.
 
 G^t_t and G^l_l of the metric -e^{2 psi} dt^2 + dl^2 + R^2 dOmega with source -h alpha^4 diag(-3, 1, 1, 1), alpha = psi',
 written with p = dR/dl as variable (another form than the program's): y = alpha R solves
