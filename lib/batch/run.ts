@@ -44,7 +44,7 @@ export interface RunOptions {
   readonly signal?: AbortSignal;
   /** Called once before the first row and after each. */
   readonly onProgress?: (progress: Counts) => void;
-  /** Called with what the user should know: a lock taken over, records dropped. */
+  /** Called with what went wrong and was mended: a lock taken over, records dropped, a bad store. */
   readonly onNotice?: (text: string) => void;
   /** Module of the worker. @default the row solver's worker */
   readonly worker?: URL;
@@ -58,6 +58,8 @@ export interface RunOutcome {
   readonly total: number;
   /** Finished rows. */
   readonly finished: number;
+  /** Those of them that the store had. */
+  readonly taken: number;
   /** Counts and extremes of results.csv; absent if the run was stopped before it was written. */
   readonly summary?: Summary;
   /** Rows that a fault of the program, a crash or a limit ended. */
@@ -142,7 +144,7 @@ async function complete(
   ) {
     if (store) await share(plan, held, store, options);
     const summary = summaryOf(previous.summary);
-    return { status: "nothing-to-do", total, finished: total, summary, unfinished: [] };
+    return { status: "nothing-to-do", total, finished: total, taken: 0, summary, unfinished: [] };
   }
   const part = await beginPart(options);
   const head = (rest: Partial<RecordHead>, now: RunPart): RecordHead => ({
@@ -156,10 +158,7 @@ async function complete(
   });
   await writeRecord(head({}, part), folder);
   writeWhole(`${folder}/${FILES.table}`, plan.table);
-  if (store) {
-    const taken = await share(plan, held, store, options);
-    if (taken > 0) options.onNotice?.(`Taken from the store: ${taken} of ${total} rows`);
-  }
+  const taken = store ? await share(plan, held, store, options) : 0;
   const kept = finishedOf(plan, held);
   const unfinished = await solveMissing(plan, held, options, store);
   const finished = finishedOf(plan, held);
@@ -167,7 +166,7 @@ async function complete(
   const tables = signal?.aborted ? undefined : await writeTables(plan, held, folder, signal);
   if (tables === undefined) {
     await writeRecord(head({ status: "interrupted", unfinished }, ended()), folder);
-    return { status: "interrupted", total, finished, unfinished };
+    return { status: "interrupted", total, finished, taken, unfinished };
   }
   const status = finished === total ? "done" : "interrupted";
   const { results, summary, profiled } = tables;
@@ -177,5 +176,5 @@ async function complete(
     folder,
     rows,
   );
-  return { status, total, finished, summary, unfinished };
+  return { status, total, finished, taken, summary, unfinished };
 }

@@ -68,9 +68,10 @@ function statusOf({ status, summary }: RunOutcome): number {
 }
 
 function report(outcome: RunOutcome, out: string, quiet: boolean): void {
-  const { status, summary, unfinished, total, finished } = outcome;
+  const { status, summary, unfinished, total, finished, taken } = outcome;
   const say = quiet ? () => {} : (line: string) => console.log(line);
   if (status === "nothing-to-do") say(`Nothing to do: ${out} holds this run whole`);
+  if (taken > 0) say(`Taken from the store: ${taken} of ${total} rows`);
   if (summary) { for (const line of summaryLines(summary)) say(line); }
   for (const row of unfinished) console.error(`interrupted: ${row.case}: ${row.error}`);
   if (status === "interrupted") {

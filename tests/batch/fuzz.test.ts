@@ -36,8 +36,10 @@ function attempt(row: TableRow) {
 
 /** The same table with every field in quotation marks and the columns turned round. */
 function rewritten(bytes: Uint8Array): Uint8Array {
-  const lines = new TextDecoder().decode(bytes).split(/\r?\n/).filter((line) => line !== "");
-  const turned = lines.map((line) => line.split(",").reverse().map((f) => `"${f}"`).join(","));
+  const lines = new TextDecoder().decode(bytes).split(/\r?\n/);
+  const turned = lines.map((line) =>
+    line === "" ? "" : line.split(",").reverse().map((f) => `"${f}"`).join(",")
+  );
   return new TextEncoder().encode(turned.join("\r\n"));
 }
 
