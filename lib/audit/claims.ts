@@ -54,7 +54,7 @@ class Faults {
 function misplaced(file: ClaimsFile, faults: Faults): void {
   const free = file.setting === "free";
   const only = free
-    ? (["model", "classical", "solution"] as const)
+    ? (["model", "values", "classical", "solution"] as const)
     : (["coordinates", "fields", "functions", "rules"] as const);
   for (const part of only) {
     if (file[part] === undefined) continue;

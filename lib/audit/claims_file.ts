@@ -43,6 +43,8 @@ export interface ClaimsFile {
     readonly V: string | number;
     readonly source?: string;
   };
+  /** Exact values of parameters of the model. */
+  readonly values?: Readonly<Record<string, string | number>>;
   /** Leave the quantum part out. @default false */
   readonly classical?: boolean;
   /** Fields of a static solution as expressions of one coordinate, held against the equations. */

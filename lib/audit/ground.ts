@@ -42,8 +42,10 @@ const SHARED: Named<Quantity> = {
 };
 const SCALARS = parse("12*kappa"); // N
 
+type Reader = (text: string | number) => Expr;
+
 /** Reads a text of a convention whose only quantity can be kappa. */
-function reader(convention: Convention): (text: string | number) => Expr {
+function reader(convention: Convention): Reader {
   const kappa = mul(conversion("kappa", HOUSE, convention), sym("kappa"));
   return (text) => substitute(parse(String(text)), { kappa, N: SCALARS });
 }
@@ -62,7 +64,24 @@ export function actionOfFile(file: ClaimsFile, convention: Convention): Action {
     : model === "any"
     ? GENERIC
     : actionOf(model ?? "");
-  return file.classical ? classical(made) : made;
+  const set = withValues(made, file.values ?? {}, read);
+  return file.classical ? classical(set) : set;
+}
+
+/** The action with exact values for some of its parameters. */
+function withValues(action: Action, values: Named<string | number>, read: Reader): Action {
+  const known = parametersOf(action), { functions: f } = action;
+  for (const name of Object.keys(values)) {
+    if (known.includes(name)) continue;
+    throw new RangeError(
+      `Cannot set ${name} as it must be a parameter of the model: these are ${
+        known.join(", ") || "none"
+      }`,
+    );
+  }
+  const table = Object.fromEntries(Object.entries(values).map(([name, v]) => [name, read(v)]));
+  const put = (e: Expr) => substitute(e, table);
+  return f ? { ...action, functions: { H: put(f.H), K: put(f.K), V: put(f.V) } } : action;
 }
 
 /** Parameters of an action: what its functions hold besides phi and kappa. */

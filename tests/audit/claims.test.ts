@@ -119,6 +119,31 @@ describe("Claims about a model", () => {
   });
 });
 
+describe("Parameters with exact values", () => {
+  it("let a solution be stated in units of one of them", async () => {
+    const file: Rest = {
+      setting: "static",
+      model: "jt",
+      values: { L: 1 },
+      constants: ["xh"],
+      ranges: { x: [1.6, 3.1], xh: [0.4, 1.3] },
+      solution: {
+        coordinate: "x",
+        pace: "1/(x^2-xh^2)",
+        phi: "x + kappa/2",
+        rho: "log(x^2-xh^2)/2",
+        c: "2*xh",
+      },
+    };
+    const half = { ...file, values: { L: "1/2" } };
+    expect(await verdicts(file, claim("R", "-2"))).toEqual(Array(4).fill("proved"));
+    expect(await verdicts(half, claim("R", "-2"))).toContain("refuted");
+    await expect(verdicts({ ...file, values: { M: 1 } }, claim("R", "-2"))).rejects.toThrow(
+      "Cannot set M as it must be a parameter of the model: these are L",
+    );
+  });
+});
+
 describe("Claims in a setting of one's own", () => {
   it("use fields, open functions, rules, abbreviations and ranges", async () => {
     const file: Rest = {
