@@ -6,5 +6,5 @@ export default defineConfig({
   root,
   cacheDir: "node_modules/.vite",
   resolve: { alias: { "@backstamp/backstamp": `${root}lib/mod.ts` } },
-  test: { include: ["tests/**/*.test.ts"], testTimeout: 120_000, hookTimeout: 120_000 },
+  test: { include: ["tests/**/*.test.ts"], testTimeout: 600_000, hookTimeout: 600_000 },
 });
