@@ -212,9 +212,8 @@ function checkFields(values: ReadonlyMap<string, number>, cells: Cells, report: 
   if (FIELD_COLUMNS.every((name) => (values.get(name) ?? 0) === 0)) {
     report(
       FIELD_COLUMNS[0],
-      `or ${
-        FIELD_COLUMNS.slice(1).join(" or ")
-      } must be > 0 for model anomaly4d: current number is 0`,
+      `must be > 0 for model anomaly4d where ${FIELD_COLUMNS.slice(1).join(" and ")} are 0: ` +
+        `current value is ${quoted(cells.text(FIELD_COLUMNS[0]))}`,
     );
   }
 }

@@ -12,6 +12,7 @@ it("A bound meets the tolerance up to tolerance times magnitude, and one that is
   expect(fault(0.003)).toBe(
     "tolerance: the bound of curvature_locus is 3.0e-3, the tolerance asks for 2.0e-3",
   );
+  expect(unmet(input, { mass: { value: NaN } })).toMatch(/^out-of-range: mass /);
   expect(fault(Infinity)).toMatch(/^tolerance: .* is Infinity/);
   expect(fault(NaN)).toMatch(/^tolerance: the bound of curvature_locus is unknown/);
 });
